@@ -1,0 +1,26 @@
+namespace Stochastic.Chains;
+
+/// <summary>How a question is to be computed, whatever the method. Accepted by every solve.</summary>
+/// <example>
+/// <code>
+/// var options = new SolveOptions { CertificateLevel = CertificateLevel.Residual, CancellationToken = token };
+/// var shares = chain.Stationary(options);
+/// </code>
+/// </example>
+public sealed record SolveOptions
+{
+    /// <summary>Gets how much evidence the result carries. Default: <see cref="CertificateLevel.Proof"/>.</summary>
+    public CertificateLevel CertificateLevel { get; init; } = CertificateLevel.Proof;
+
+    /// <summary>Gets the token that cancels the computation. Default: none.</summary>
+    public CancellationToken CancellationToken { get; init; } = CancellationToken.None;
+
+    /// <summary>Gets where progress is reported, now and then. Default: nowhere.</summary>
+    public IProgress<SolveProgress>? Progress { get; init; }
+
+    /// <summary>
+    /// Gets the largest working memory of one solve, in bytes. A solve that needs more is refused with the size it would need,
+    /// before it takes any. Default: 2 GiB.
+    /// </summary>
+    public long MemoryLimit { get; init; } = 2L << 30;
+}

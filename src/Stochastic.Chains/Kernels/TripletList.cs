@@ -1,0 +1,106 @@
+namespace Stochastic.Chains.Kernels;
+
+/// <summary>
+/// A growing list of (row, column, value) entries, kept in blocks so that growing never copies: 16 bytes an entry, freed block by
+/// block while the compressed rows (12 bytes an entry) are filled.
+/// </summary>
+internal sealed class TripletList
+{
+    private const int BlockLength = 1 << 16;
+
+    private readonly List<Block> _blocks = [];
+    private int _inLast = BlockLength;
+
+    internal long Count => _blocks.Count == 0 ? 0 : ((long)(_blocks.Count - 1) * BlockLength) + _inLast;
+
+    internal void Add(int row, int column, double value)
+    {
+        if (_inLast == BlockLength)
+        {
+            _blocks.Add(new Block(new int[BlockLength], new int[BlockLength], new double[BlockLength]));
+            _inLast = 0;
+        }
+
+        var block = _blocks[^1];
+        block.Rows[_inLast] = row;
+        block.Columns[_inLast] = column;
+        block.Values[_inLast] = value;
+        _inLast++;
+    }
+
+    /// <summary>Moves all entries into compressed rows with ascending columns; entries of one cell stay side by side. Empties the list.</summary>
+    /// <exception cref="OverflowException">More than 2³¹ − 1 entries.</exception>
+    internal CompressedRows ToCompressedRows(int rowCount)
+    {
+        var total = checked((int)Count);
+        var starts = CountRows(rowCount);
+        var next = starts.AsSpan(0, rowCount).ToArray();
+        var columns = new int[total];
+        var values = new double[total];
+        for (var b = 0; b < _blocks.Count; b++)
+        {
+            var block = _blocks[b];
+            var length = LengthOf(b);
+            _blocks[b] = Block.Released;
+            for (var k = 0; k < length; k++)
+            {
+                var position = next[block.Rows[k]]++;
+                columns[position] = block.Columns[k];
+                values[position] = block.Values[k];
+            }
+        }
+
+        _blocks.Clear();
+        _inLast = BlockLength;
+        var rows = new CompressedRows(starts, columns, values);
+        for (var row = 0; row < rowCount; row++)
+        {
+            var rowColumns = rows.RowColumns(row);
+            if (!IsAscending(rowColumns))
+            {
+                rowColumns.Sort(rows.RowValues(row));
+            }
+        }
+
+        return rows;
+    }
+
+    private static bool IsAscending(ReadOnlySpan<int> columns)
+    {
+        for (var k = 1; k < columns.Length; k++)
+        {
+            if (columns[k - 1] > columns[k])
+            {
+                return false;
+            }
+        }
+
+        return true;
+    }
+
+    private int[] CountRows(int rowCount)
+    {
+        var starts = new int[rowCount + 1];
+        for (var b = 0; b < _blocks.Count; b++)
+        {
+            foreach (var row in _blocks[b].Rows.AsSpan(0, LengthOf(b)))
+            {
+                starts[row + 1]++;
+            }
+        }
+
+        for (var row = 0; row < rowCount; row++)
+        {
+            starts[row + 1] += starts[row];
+        }
+
+        return starts;
+    }
+
+    private int LengthOf(int block) => block == _blocks.Count - 1 ? _inLast : BlockLength;
+
+    private readonly record struct Block(int[] Rows, int[] Columns, double[] Values)
+    {
+        internal static Block Released { get; } = new([], [], []);
+    }
+}

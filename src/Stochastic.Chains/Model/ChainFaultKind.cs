@@ -1,0 +1,50 @@
+namespace Stochastic.Chains;
+
+/// <summary>What is wrong with one piece of a chain's input.</summary>
+public enum ChainFaultKind
+{
+    /// <summary>The chain has no states at all.</summary>
+    NoStates,
+
+    /// <summary>A state is null.</summary>
+    NullState,
+
+    /// <summary>A state is listed twice.</summary>
+    DuplicateState,
+
+    /// <summary>A move names a state that is not in the given list of states.</summary>
+    UnknownState,
+
+    /// <summary>The matrix is not square, or its size differs from the number of states.</summary>
+    WrongShape,
+
+    /// <summary>A state has no way on, not even to stay: its row is missing or all zeros.</summary>
+    EmptyRow,
+
+    /// <summary>A probability is NaN or infinite.</summary>
+    NotFinite,
+
+    /// <summary>A probability or a rate is below zero.</summary>
+    Negative,
+
+    /// <summary>A probability is above one.</summary>
+    AboveOne,
+
+    /// <summary>The probabilities of a row do not sum to one.</summary>
+    RowSum,
+
+    /// <summary>The same move is given twice.</summary>
+    DuplicateTransition,
+
+    /// <summary>A rate leads from a state to itself, which has no meaning in continuous time.</summary>
+    SelfRate,
+
+    /// <summary>A rate is too large or too small, beside the largest, to be stored exactly.</summary>
+    RateOutOfRange,
+
+    /// <summary>A state was never left in the counts from which the chain is to be estimated.</summary>
+    UnobservedRow,
+
+    /// <summary>Stands last in a list of faults that was cut; its value is the number of faults not listed.</summary>
+    Unlisted,
+}

@@ -1,0 +1,40 @@
+using Stochastic.Chains.Internal;
+
+namespace Stochastic.Chains;
+
+/// <summary>Takes the rows of a chain one by one, inside <see cref="Chain.Build{TState}(Action{ChainRows{TState}})"/>.</summary>
+/// <typeparam name="TState">The type of a state.</typeparam>
+/// <example>
+/// <code>
+/// var pump = Chain.Build&lt;string&gt;(rows => rows
+///     .Row("new", ("new", 0.90), ("worn", 0.10))
+///     .Row("worn", ("new", 1.0)));
+/// </code>
+/// </example>
+public sealed class ChainRows<TState>
+    where TState : notnull
+{
+    private readonly ChainAssembler<TState> _assembler;
+    private readonly HashSet<int> _given = [];
+
+    internal ChainRows(ChainAssembler<TState> assembler) => _assembler = assembler;
+
+    /// <summary>Gives all moves out of one state.</summary>
+    /// <param name="from">The state the moves start in; each state has one row.</param>
+    /// <param name="moves">Where the next step leads, with its probability; to <paramref name="from"/> itself for a stay.</param>
+    /// <returns>These rows, to go on with.</returns>
+    public ChainRows<TState> Row(TState from, params ReadOnlySpan<(TState To, double Probability)> moves)
+    {
+        if (from is not null && !_given.Add(_assembler.FindOrAdd(from)))
+        {
+            _assembler.Faults.Add(ChainFaultKind.DuplicateState, [from], _given.Count, Messages.DuplicateRow(from));
+        }
+
+        foreach (var (to, probability) in moves)
+        {
+            _assembler.Add(from!, to, probability);
+        }
+
+        return this;
+    }
+}

@@ -1,0 +1,84 @@
+using Stochastic.Chains.Internal;
+using Stochastic.Chains.Kernels;
+
+namespace Stochastic.Chains;
+
+/// <summary>Checks rows of probabilities one by one, rescales those that the options allow, and gathers the faults.</summary>
+internal sealed class RowValidator<TState>(StateSpace<TState> states, RowSums rowSums, FaultCollector faults)
+    where TState : notnull
+{
+    private readonly List<RescaledRow<TState>> _rescaled = [];
+
+    internal IReadOnlyList<RescaledRow<TState>> Rescaled => _rescaled;
+
+    /// <summary>Checks the nonzero entries of a row, columns ascending; divides the values by their sum where that is allowed.</summary>
+    internal void Check(int row, ReadOnlySpan<int> columns, Span<double> values)
+    {
+        var from = states[row];
+        if (columns.IsEmpty)
+        {
+            faults.Add(ChainFaultKind.EmptyRow, [from], 0, Messages.EmptyRow(from));
+            return;
+        }
+
+        var tolerance = RowSums.Tolerance(columns.Length);
+        var allowed = Math.Max(tolerance, rowSums.MaxDeviation);
+        var sum = default(CompensatedSum);
+        for (var k = 0; k < columns.Length; k++)
+        {
+            CheckEntry(from, states[columns[k]], values[k], 1 + allowed);
+            if (k > 0 && columns[k] == columns[k - 1])
+            {
+                var to = states[columns[k]];
+                faults.Add(ChainFaultKind.DuplicateTransition, [from, to], values[k], Messages.DuplicateTransition(from, to));
+            }
+
+            sum.Add(values[k]);
+        }
+
+        CheckSum(from, sum.Value, tolerance, allowed, values);
+    }
+
+    private void CheckEntry(TState from, TState to, double value, double largest)
+    {
+        if (!double.IsFinite(value))
+        {
+            faults.Add(ChainFaultKind.NotFinite, [from, to], value, Messages.NotFinite(from, to, value));
+        }
+        else if (value < 0)
+        {
+            faults.Add(ChainFaultKind.Negative, [from, to], value, Messages.Negative(from, to, value));
+        }
+        else if (value > largest)
+        {
+            faults.Add(ChainFaultKind.AboveOne, [from, to], value, Messages.AboveOne(from, to, value));
+        }
+    }
+
+    private void CheckSum(TState from, double sum, double tolerance, double allowed, Span<double> values)
+    {
+        if (!double.IsFinite(sum))
+        {
+            return; // an entry that is not finite has been reported, and the sum says nothing more
+        }
+
+        var deviation = Math.Abs(sum - 1);
+        if (deviation <= tolerance)
+        {
+            return;
+        }
+
+        if (deviation > allowed)
+        {
+            faults.Add(ChainFaultKind.RowSum, [from], sum, Messages.RowSum(from, sum));
+            return;
+        }
+
+        foreach (ref var value in values)
+        {
+            value /= sum;
+        }
+
+        _rescaled.Add(new RescaledRow<TState>(from, sum));
+    }
+}
