@@ -88,11 +88,7 @@ internal sealed class ChainAssembler<TState>
     private Chain<TState>? FromRows(StateSpace<TState> states, CompressedRows rows, double? uniformizationRate)
     {
         var validator = new RowValidator<TState>(states, _rowSums, Faults);
-        for (var row = 0; row < states.Count; row++)
-        {
-            validator.Check(row, rows.RowColumns(row), rows.RowValues(row));
-        }
-
+        validator.CheckAll(rows);
         return Faults.HasFaults
             ? null
             : new Chain<TState>(states, TransitionMatrix.FromCompressedRows(rows), validator.Rescaled, uniformizationRate);

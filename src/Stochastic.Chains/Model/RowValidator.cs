@@ -4,12 +4,24 @@ using Stochastic.Chains.Kernels;
 namespace Stochastic.Chains;
 
 /// <summary>Checks rows of probabilities one by one, rescales those that the options allow, and gathers the faults.</summary>
-internal sealed class RowValidator<TState>(StateSpace<TState> states, RowSums rowSums, FaultCollector faults)
+/// <param name="states">The labels as given: they only name what is wrong, so they may themselves be null or repeated.</param>
+/// <param name="rowSums">What is done with a sum that is not one.</param>
+/// <param name="faults">Takes the faults.</param>
+internal sealed class RowValidator<TState>(IReadOnlyList<TState> states, RowSums rowSums, FaultCollector faults)
     where TState : notnull
 {
     private readonly List<RescaledRow<TState>> _rescaled = [];
 
     internal IReadOnlyList<RescaledRow<TState>> Rescaled => _rescaled;
+
+    /// <summary>Checks every row in turn.</summary>
+    internal void CheckAll(CompressedRows rows)
+    {
+        for (var row = 0; row < rows.RowCount; row++)
+        {
+            Check(row, rows.RowColumns(row), rows.RowValues(row));
+        }
+    }
 
     /// <summary>Checks the nonzero entries of a row, columns ascending; divides the values by their sum where that is allowed.</summary>
     internal void Check(int row, ReadOnlySpan<int> columns, Span<double> values)
@@ -26,7 +38,7 @@ internal sealed class RowValidator<TState>(StateSpace<TState> states, RowSums ro
         var sum = default(CompensatedSum);
         for (var k = 0; k < columns.Length; k++)
         {
-            CheckEntry(from, states[columns[k]], values[k], 1 + allowed);
+            CheckEntry(row, columns[k], values[k], 1 + allowed);
             if (k > 0 && columns[k] == columns[k - 1])
             {
                 var to = states[columns[k]];
@@ -39,8 +51,14 @@ internal sealed class RowValidator<TState>(StateSpace<TState> states, RowSums ro
         CheckSum(from, sum.Value, tolerance, allowed, values);
     }
 
-    private void CheckEntry(TState from, TState to, double value, double largest)
+    private void CheckEntry(int row, int column, double value, double largest)
     {
+        if (value >= 0 && value <= largest)
+        {
+            return;
+        }
+
+        var (from, to) = (states[row], states[column]);
         if (!double.IsFinite(value))
         {
             faults.Add(ChainFaultKind.NotFinite, [from, to], value, Messages.NotFinite(from, to, value));
@@ -49,7 +67,7 @@ internal sealed class RowValidator<TState>(StateSpace<TState> states, RowSums ro
         {
             faults.Add(ChainFaultKind.Negative, [from, to], value, Messages.Negative(from, to, value));
         }
-        else if (value > largest)
+        else
         {
             faults.Add(ChainFaultKind.AboveOne, [from, to], value, Messages.AboveOne(from, to, value));
         }
