@@ -6,6 +6,10 @@ internal static partial class Messages
     internal const string NoStates = "The chain has no states. Give at least one.";
     internal const string DeviationOutOfRange = "The largest deviation to rescale must be above 0 and below 1.";
     internal const string WeightsSumToZero = "All weights are zero, so they describe no distribution. Give at least one positive weight.";
+    internal const string RowAfterBuild = "The chain has been built already. Give its rows inside the call of Chain.Build.";
+
+    internal static string NullRow(int position) =>
+        $"Row number {Text.Count(position + 1)} is given for a null state. Give every state a label.";
 
     internal static string NullStateInList(int position) =>
         $"The state at position {Text.Count(position)} is null. Give every state a label.";
