@@ -67,8 +67,12 @@ internal static partial class Messages
     internal static string SelfRate(object state, double value) =>
         $"The rate {Text.Number(value)} leads from {Text.Quoted(state)} to itself. Leave it out: in continuous time staying is not a move.";
 
-    internal static string RateOutOfRange(object from, object to, double value) =>
-        $"The rate {Text.Number(value)} of {Text.Quoted(from)} to {Text.Quoted(to)} is too far from the others to be stored without loss. Use a unit of time in which the rates are closer to 1.";
+    internal static string RatesTooLarge(object from, double total) =>
+        $"The rates out of {Text.Quoted(from)} sum to {Text.Number(total)}, more than can be computed with. Use a shorter unit of time, in which the rates are smaller.";
+
+    internal static string RateTooSmall(object from, object to, double value, double largest) =>
+        $"The rate {Text.Number(value)} of {Text.Quoted(from)} to {Text.Quoted(to)} is too small to be stored beside the largest, about {Text.Short(largest)}. " +
+        "Correct one of the two, or give the move the rate 0 if it may be left out.";
 
     internal static string UnobservedRow(object state) =>
         $"State {Text.Quoted(state)} was never seen to be followed by anything, so its probabilities are unknown. Observe longer, " +
