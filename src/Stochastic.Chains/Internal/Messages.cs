@@ -3,6 +3,8 @@ namespace Stochastic.Chains.Internal;
 /// <summary>The catalogue of messages about models and their input. Each carries the values, says what to do and ends with a period.</summary>
 internal static partial class Messages
 {
+    private const double LargestDeviationToRescale = 0.99;
+
     internal const string NoStates = "The chain has no states. Give at least one.";
     internal const string DeviationOutOfRange = "The largest deviation to rescale must be above 0 and below 1.";
     internal const string WeightsSumToZero = "All weights are zero, so they describe no distribution. Give at least one positive weight.";
@@ -49,10 +51,12 @@ internal static partial class Messages
 
     internal static string RowSum(object state, double sum)
     {
-        var deviation = Text.Short(Math.Abs(sum - 1));
+        var deviation = Math.Abs(sum - 1);
         var side = sum > 1 ? "above" : "below";
-        return $"The row of {Text.Quoted(state)} sums to {Text.Number(sum)}, {deviation} {side} one. Correct its probabilities, " +
-            $"or allow a rescaling with RowSums.Rescale of {deviation} or more.";
+        var advice = deviation < LargestDeviationToRescale
+            ? $"Correct its probabilities, or allow a rescaling with RowSums.Rescale of {Text.ShortAtLeast(deviation)} or more."
+            : "Correct its probabilities: they are parts of 1.";
+        return $"The row of {Text.Quoted(state)} sums to {Text.Number(sum)}, {Text.Short(deviation)} {side} one. {advice}";
     }
 
     internal static string DuplicateTransition(object from, object to) =>

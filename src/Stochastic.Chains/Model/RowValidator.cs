@@ -34,7 +34,7 @@ internal sealed class RowValidator<TState>(IReadOnlyList<TState> states, RowSums
         }
 
         var tolerance = RowSums.Tolerance(columns.Length);
-        var allowed = Math.Max(tolerance, rowSums.MaxDeviation);
+        var allowed = tolerance + rowSums.MaxDeviation; // 1.1 − 1 is above 0.1 in doubles
         var sum = default(CompensatedSum);
         for (var k = 0; k < columns.Length; k++)
         {
