@@ -25,7 +25,7 @@ internal static partial class Messages
     internal static string DuplicateRow(object state) =>
         $"State {Text.Quoted(state)} is given two rows. Give all its moves in one.";
 
-    internal static string UnknownStateInMove(object state, object from, object to) =>
+    internal static string UnknownStateInMove(object state, object? from, object? to) =>
         $"The move {Text.Quoted(from)} to {Text.Quoted(to)} names {Text.Quoted(state)}, which is not in the list of states. Correct the label or add it to the list.";
 
     internal static string UnknownState<TState>(TState state, IReadOnlyCollection<TState> known) =>

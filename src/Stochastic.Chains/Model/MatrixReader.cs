@@ -1,3 +1,4 @@
+using System.Collections.ObjectModel;
 using MathNet.Numerics.LinearAlgebra;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Kernels;
@@ -39,7 +40,7 @@ internal static class MatrixReader<TState>
                 }
             }
 
-            validator.Check(row, columns.AsSpan(0, count), values.AsSpan(0, count));
+            validator.Check(row, columns.AsSpan(0, count), values.AsSpan(0, count), refused: 0);
             writer.Write(row, columns.AsSpan(0, count), values.AsSpan(0, count));
         }
 
@@ -72,7 +73,7 @@ internal static class MatrixReader<TState>
 
         var rows = entries.ToCompressedRows(states.Count);
         var validator = new RowValidator<TState>(states, options.RowSums, faults);
-        validator.CheckAll(rows);
+        validator.CheckAll(rows, ReadOnlyDictionary<int, double>.Empty);
         return faults.HasFaults
             ? null
             : new Chain<TState>(builder.ToStateSpace(), TransitionMatrix.FromCompressedRows(rows), validator.Rescaled, uniformizationRate: null);

@@ -15,27 +15,30 @@ internal sealed class RowValidator<TState>(IReadOnlyList<TState> states, RowSums
     internal IReadOnlyList<RescaledRow<TState>> Rescaled => _rescaled;
 
     /// <summary>Checks every row in turn.</summary>
-    internal void CheckAll(CompressedRows rows)
+    /// <param name="rows">The nonzero entries; rescaled in place where that is allowed.</param>
+    /// <param name="refused">What was given to labels that are faults themselves: it counts, so that one wrong label is one fault.</param>
+    internal void CheckAll(CompressedRows rows, IReadOnlyDictionary<int, double> refused)
     {
         for (var row = 0; row < rows.RowCount; row++)
         {
-            Check(row, rows.RowColumns(row), rows.RowValues(row));
+            Check(row, rows.RowColumns(row), rows.RowValues(row), refused.GetValueOrDefault(row));
         }
     }
 
     /// <summary>Checks the nonzero entries of a row, columns ascending; divides the values by their sum where that is allowed.</summary>
-    internal void Check(int row, ReadOnlySpan<int> columns, Span<double> values)
+    internal void Check(int row, ReadOnlySpan<int> columns, Span<double> values, double refused)
     {
         var from = states[row];
-        if (columns.IsEmpty)
+        if (columns.IsEmpty && refused == 0)
         {
             faults.Add(ChainFaultKind.EmptyRow, [from], 0, Messages.EmptyRow(from));
             return;
         }
 
-        var tolerance = RowSums.Tolerance(columns.Length);
+        var tolerance = RowSums.Tolerance(columns.Length + (refused == 0 ? 0 : 1));
         var allowed = tolerance + rowSums.MaxDeviation; // 1.1 − 1 is above 0.1 in doubles
         var sum = default(CompensatedSum);
+        sum.Add(refused);
         for (var k = 0; k < columns.Length; k++)
         {
             CheckEntry(row, columns[k], values[k], 1 + allowed);
