@@ -1,0 +1,81 @@
+using ScottPlot;
+using ScottPlot.TickGenerators;
+using Stochastic.Chains;
+
+namespace CratePool.Pictures;
+
+/// <summary>Draws the share of each stage week by week, and the level it settles at.</summary>
+internal static class ForecastPicture
+{
+    private const int Width = 1440;
+    private const int Height = 860;
+    private const float LabelSize = 17;
+
+    /// <summary>Writes the picture.</summary>
+    /// <param name="weeks">The shares today and after each week.</param>
+    /// <param name="longRun">The shares that the pool settles at.</param>
+    /// <param name="stages">The stages, in the order of their colors.</param>
+    /// <param name="path">The file to write.</param>
+    internal static void Save(IReadOnlyList<Distribution<string>> weeks, Distribution<string> longRun, StageOrder stages, string path)
+    {
+        using var plot = new Plot();
+        var last = weeks.Count - 1;
+        var top = stages.All.Max(stage => Math.Max(longRun[stage], weeks.Max(week => week[stage]))) * 108;
+        var lines = stages.All.Select((stage, number) => (Stage: stage, Color: ColorOf(stages, number), Level: longRun[stage] * 100)).ToList();
+        Frame(plot, last, top);
+        foreach (var (stage, color, level) in lines)
+        {
+            var longRunLine = plot.Add.Line(0, level, last, level);
+            (longRunLine.LineColor, longRunLine.LineWidth, longRunLine.LinePattern) = (color.WithAlpha(0.55), 1.5f, LinePattern.Dotted);
+            double[] xs = [.. Enumerable.Range(0, weeks.Count).Select(week => (double)week)];
+            var line = plot.Add.ScatterLine(xs, [.. weeks.Select(week => week[stage] * 100)], color);
+            line.LineWidth = 3;
+        }
+
+        LabelLines(plot, last, top, lines);
+        plot.SavePng(path, Width, Height);
+    }
+
+    private static Color ColorOf(StageOrder stages, int number) =>
+        number < stages.InUse.Count ? StageColors.OfStage(number) : StageColors.OfEnd(number - stages.InUse.Count);
+
+    private static void Frame(Plot plot, int last, double top)
+    {
+        plot.Font.Set(PictureFont.Name);
+        plot.Title("Share of the pool in each stage, lost and scrapped crates replaced", 24);
+        plot.XLabel("weeks from now", LabelSize);
+        plot.YLabel("share of the pool in %", LabelSize);
+        foreach (var label in new[] { plot.Axes.Title.Label, plot.Axes.Bottom.Label, plot.Axes.Left.Label })
+        {
+            label.Bold = false;
+            label.ForeColor = StageColors.Ink;
+        }
+
+        double[] ticks = [.. Enumerable.Range(0, last + 1).Where(week => week % 13 == 0 || week == 4).Select(week => (double)week)];
+        plot.Axes.Bottom.TickGenerator = new NumericManual(ticks, [.. ticks.Select(week => week == 0 ? "today" : $"{week:0}")]);
+        plot.Axes.Bottom.TickLabelStyle.FontSize = LabelSize;
+        plot.Axes.Left.TickLabelStyle.FontSize = LabelSize;
+        plot.Axes.Right.IsVisible = false;
+        plot.Axes.Top.IsVisible = false;
+        plot.Axes.Color(StageColors.Ink);
+        plot.Grid.MajorLineColor = StageColors.Rule;
+        plot.Axes.SetLimits(0, last * 1.42, -1.5, top);
+        plot.Layout.Fixed(new PixelPadding(90, 20, 80, 70));
+    }
+
+    /// <summary>Writes the stages beside the ends of their lines, pushed apart where they would lie on each other.</summary>
+    private static void LabelLines(Plot plot, int last, double top, List<(string Stage, Color Color, double Level)> lines)
+    {
+        var distance = top / 26;
+        var place = double.NegativeInfinity;
+        foreach (var (stage, color, level) in lines.OrderBy(line => line.Level))
+        {
+            place = Math.Max(level, place + distance);
+            var pointer = plot.Add.Line(last, level, last * 1.03, place);
+            (pointer.LineColor, pointer.LineWidth) = (color, 1);
+            var text = plot.Add.Text($"{stage}, {Percent.Short(level / 100)} in the long run", last * 1.035, place);
+            (text.LabelFontName, text.LabelFontSize, text.LabelFontColor) = (PictureFont.Name, LabelSize, color);
+            text.LabelAlignment = Alignment.MiddleLeft;
+        }
+    }
+}
