@@ -92,4 +92,9 @@ internal sealed class TransitionMatrix
         where TAlgorithm : IGraphAlgorithm<TResult> => _dense is not null
         ? algorithm.Run(new DenseGraph(_dense, Size))
         : algorithm.Run(new SparseGraph(_rowStarts!, _columns!));
+
+    /// <summary>The strongly connected components; a dense matrix without zeros is recognized from one row and one column.</summary>
+    internal Components FindComponents() => _dense is not null && DenseConnectivity.IsStronglyConnected(_dense, Size)
+        ? new Components(new int[Size], 1)
+        : OnGraph<Components, StronglyConnectedComponents>(default);
 }
