@@ -75,7 +75,7 @@ internal static class ForecastPicture
             (pointer.LineColor, pointer.LineWidth) = (color, 1);
             var text = plot.Add.Text($"{stage}, {Percent.Short(level / 100)} in the long run", last * 1.035, place);
             (text.LabelFontName, text.LabelFontSize, text.LabelFontColor) = (PictureFont.Name, LabelSize, color);
-            text.LabelAlignment = Alignment.MiddleLeft;
+            (text.LabelAlignment, text.LabelBackgroundColor) = (Alignment.MiddleLeft, Colors.White);
         }
     }
 }

@@ -3,7 +3,7 @@ using ScottPlot;
 namespace CratePool.Pictures;
 
 /// <summary>Finds a free place along each arrow for its figure.</summary>
-internal sealed class LabelPlaces(IReadOnlyList<StageNode> nodes, IReadOnlyList<Arrow> arrows)
+internal sealed class LabelPlaces(StageLayout layout)
 {
     private const double Taken = 1000;
     private const double Crossed = 4;
@@ -24,8 +24,8 @@ internal sealed class LabelPlaces(IReadOnlyList<StageNode> nodes, IReadOnlyList<
     }
 
     private double Cost(CoordinateRect patch, Arrow own) =>
-        (Taken * _taken.Concat(nodes.Select(node => node.Box)).Count(box => Overlap(box, patch))) +
-        (Crossed * arrows.Where(arrow => arrow != own).Sum(arrow => arrow.Line.Count(patch.Contains)));
+        (Taken * _taken.Concat(layout.Nodes.Select(node => node.Box)).Count(box => Overlap(box, patch))) +
+        (Crossed * layout.Arrows.Where(arrow => arrow != own).Sum(arrow => arrow.Line.Count(patch.Contains)));
 
     private static CoordinateRect PatchAt(Coordinates center, PixelSize size) =>
         new(center.X - (size.Width / 2) - 3, center.X + (size.Width / 2) + 3, center.Y - (size.Height / 2) - 1, center.Y + (size.Height / 2) + 1);
