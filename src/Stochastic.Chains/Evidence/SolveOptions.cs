@@ -23,4 +23,8 @@ public sealed record SolveOptions
     /// before it takes any. Default: 2 GiB.
     /// </summary>
     public long MemoryLimit { get; init; } = 2L << 30;
+
+    /// <summary>What a kernel calls with the part that is done, or null when nobody listens.</summary>
+    internal Action<double>? Report(string stage) =>
+        Progress is { } progress ? fraction => progress.Report(new SolveProgress(stage, fraction)) : null;
 }

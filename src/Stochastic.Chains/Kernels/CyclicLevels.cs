@@ -1,5 +1,3 @@
-using System.Numerics;
-
 namespace Stochastic.Chains.Kernels;
 
 /// <summary>
@@ -41,7 +39,7 @@ internal readonly struct CyclicLevels(int[] members, int[] component, int[] leve
                 }
                 else
                 {
-                    period = (int)BigInteger.GreatestCommonDivisor(period, levels[node] + 1 - levels[target]);
+                    period = (int)Divisors.Greatest(period, Math.Abs(levels[node] + 1 - levels[target]));
                 }
             }
         }

@@ -1,7 +1,9 @@
 namespace Stochastic.Chains.Kernels;
 
 /// <summary>The nodes that can be reached from a set of nodes in any number of steps, none included; O(nodes + arcs).</summary>
-internal readonly struct Reachability(IEnumerable<int> sources) : IGraphAlgorithm<bool[]>
+/// <param name="sources">Where the search starts.</param>
+/// <param name="blocked">Nodes that the search does not enter unless it starts there; null for none.</param>
+internal readonly struct Reachability(IEnumerable<int> sources, bool[]? blocked = null) : IGraphAlgorithm<bool[]>
 {
     public bool[] Run<TGraph>(TGraph graph)
         where TGraph : struct, IGraph
@@ -19,7 +21,7 @@ internal readonly struct Reachability(IEnumerable<int> sources) : IGraphAlgorith
             var cursor = graph.FirstCursor(node);
             for (var target = graph.NextTarget(node, ref cursor); target >= 0; target = graph.NextTarget(node, ref cursor))
             {
-                if (!reached[target])
+                if (!reached[target] && blocked?[target] != true)
                 {
                     reached[target] = true;
                     waiting.Push(target);

@@ -1,10 +1,15 @@
+using System.Numerics;
+
 namespace Stochastic.Chains.Kernels;
 
 /// <summary>
 /// A non-negative number with the 53 bits of a double and an exponent of its own, so that products of many small or large factors
 /// neither under- nor overflow. Each operation rounds once.
 /// </summary>
-internal readonly struct ScaledDouble
+internal readonly record struct ScaledDouble :
+    IAdditionOperators<ScaledDouble, ScaledDouble, ScaledDouble>,
+    IMultiplyOperators<ScaledDouble, ScaledDouble, ScaledDouble>,
+    IDivisionOperators<ScaledDouble, ScaledDouble, ScaledDouble>
 {
     private const int WidestGap = 64;
 

@@ -97,4 +97,37 @@ internal sealed class TransitionMatrix
     internal Components FindComponents() => _dense is not null && DenseConnectivity.IsStronglyConnected(_dense, Size)
         ? new Components(new int[Size], 1)
         : OnGraph<Components, StronglyConnectedComponents>(default);
+
+    /// <summary>
+    /// Adds the off-diagonal rates of some rows into a table, row by row: a move to state j goes to column columnOf[j]; −1 leaves it out.
+    /// </summary>
+    internal void AddRates(ReadOnlySpan<int> rows, ReadOnlySpan<int> columnOf, Action<int, int, double> add)
+    {
+        for (var r = 0; r < rows.Length; r++)
+        {
+            foreach (var (to, rate) in Row(rows[r]))
+            {
+                if (to != rows[r] && columnOf[to] >= 0)
+                {
+                    add(r, columnOf[to], rate);
+                }
+            }
+        }
+    }
+
+    /// <summary>Adds a multiple of a row, the diagonal included, to a distribution.</summary>
+    internal void AddScaledRow(int row, double weight, Span<double> target)
+    {
+        if (_dense is not null)
+        {
+            VectorLoops.AddScaled(weight, _dense.AsSpan(row * Size, Size), target);
+            return;
+        }
+
+        for (var k = _rowStarts![row]; k < _rowStarts[row + 1]; k++)
+        {
+            ref var entry = ref target[_columns![k]];
+            entry = Math.FusedMultiplyAdd(weight, _values![k], entry);
+        }
+    }
 }

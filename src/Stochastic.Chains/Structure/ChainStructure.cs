@@ -53,7 +53,6 @@ public sealed class ChainStructure<TState>
         TransientPositions = [.. Enumerable.Range(0, matrix.Size).Where(state => !Classes[_classOf[state]].IsRecurrent)];
         TransientStates = Array.ConvertAll(TransientPositions, state => chain.States[state]);
         AbsorbingStates = [.. RecurrentClasses.Where(group => group.IsAbsorbing).Select(group => group.States[0])];
-        Period = RecurrentClasses.Aggregate(1L, (period, group) => LeastCommonMultiple(period, group.Period));
     }
 
     /// <summary>Gets the communicating classes, ordered by their first state.</summary>
@@ -72,13 +71,14 @@ public sealed class ChainStructure<TState>
     public bool IsIrreducible => Classes.Count == 1;
 
     /// <summary>Gets whether no recurrent class moves in cycles, so that the distribution after n steps settles.</summary>
-    public bool IsAperiodic => Period == 1;
+    public bool IsAperiodic => RecurrentClasses.All(group => group.Period == 1);
 
     /// <summary>
     /// Gets the least common multiple of the periods of the recurrent classes: 1 when the distribution after n steps settles, else
     /// the length of the cycle it settles into.
     /// </summary>
-    public long Period { get; }
+    /// <exception cref="OverflowException">The classes have so many different periods that their common multiple exceeds 2⁶³ − 1.</exception>
+    public long Period => RecurrentClasses.Aggregate(1L, (period, group) => Divisors.LeastCommonMultiple(period, group.Period));
 
     /// <summary>
     /// Gets the states in canonical order: the recurrent classes one after the other, then the transient states so that a move
@@ -116,16 +116,5 @@ public sealed class ChainStructure<TState>
     /// <summary>A short account of the structure, the same in every culture.</summary>
     public override string ToString() =>
         $"{Text.Count(Classes.Count, "class", "classes")}, {Text.Count(RecurrentClasses.Count)} recurrent; " +
-        $"{Text.Count(TransientStates.Count, "transient state", "transient states")}; period {Text.Count(Period)}";
-
-    private static long LeastCommonMultiple(long first, long second)
-    {
-        var (divisor, rest) = (first, second);
-        while (rest != 0)
-        {
-            (divisor, rest) = (rest, divisor % rest);
-        }
-
-        return checked(first / divisor * second);
-    }
+        $"{Text.Count(TransientStates.Count, "transient state", "transient states")}; {(IsAperiodic ? "aperiodic" : "periodic")}";
 }

@@ -1,0 +1,57 @@
+namespace Stochastic.Chains.Passage;
+
+/// <summary>Absorption probabilities and mean steps of the transient states; the structure answers for the recurrent ones.</summary>
+internal static class AbsorptionSolve<TState>
+    where TState : notnull
+{
+    internal static Absorption<TState> Of(Chain<TState> chain, SolveOptions options)
+    {
+        var structure = chain.Structure();
+        var ends = structure.RecurrentClasses;
+        var endOf = new int[chain.StateCount];
+        endOf.AsSpan().Fill(-1);
+        var probabilities = new double[chain.StateCount * ends.Count];
+        for (var end = 0; end < ends.Count; end++)
+        {
+            foreach (var member in ends[end].Members)
+            {
+                endOf[member] = end;
+                probabilities[(member * ends.Count) + end] = 1;
+            }
+        }
+
+        var meanSteps = new double[chain.StateCount];
+        var evidence = new SolveEvidence(options);
+        var transient = structure.TransientPositions;
+        if (transient.Length > 0)
+        {
+            var system = new ExitSystem<TState>(chain, transient, ends.Count, state => endOf[state], options);
+            Fill(system, chain, transient, ends.Count, probabilities, meanSteps, evidence);
+        }
+
+        return new Absorption<TState>(chain.States, ends, endOf, probabilities, meanSteps, evidence.ToCertificate());
+    }
+
+    private static void Fill(
+        ExitSystem<TState> system, Chain<TState> chain, int[] transient, int ends, double[] probabilities, double[] meanSteps, SolveEvidence evidence)
+    {
+        var means = system.MeanTimes();
+        for (var k = 0; k < transient.Length; k++)
+        {
+            meanSteps[transient[k]] = means[k];
+        }
+
+        evidence.Add(system.RelativeErrorBound, () => system.Residual(1 / (chain.UniformizationRate ?? 1), meanSteps));
+        for (var end = 0; end < ends; end++)
+        {
+            var column = system.ExitProbabilities(end);
+            for (var k = 0; k < transient.Length; k++)
+            {
+                probabilities[(transient[k] * ends) + end] = column[k];
+            }
+
+            var values = Enumerable.Range(0, chain.StateCount).Select(state => probabilities[(state * ends) + end]).ToArray();
+            evidence.Add(system.RelativeErrorBound, () => system.Residual(0, values));
+        }
+    }
+}
