@@ -18,6 +18,11 @@ internal static class Percent
         return percent.ToString(format, CultureInfo.InvariantCulture) + "%";
     }
 
-    /// <summary>One decimal, for columns: 46.3%.</summary>
-    internal static string Column(double share) => (share * 100).ToString("0.0", CultureInfo.InvariantCulture) + "%";
+    /// <summary>One decimal, for columns: 46.3%. Neither nothing nor everything where it is only close to it.</summary>
+    internal static string Column(double share) => share switch
+    {
+        > 0 and < 0.0005 => "<0.1%",
+        < 1 and >= 0.9995 => ">99.9%",
+        _ => (share * 100).ToString("0.0", CultureInfo.InvariantCulture) + "%",
+    };
 }

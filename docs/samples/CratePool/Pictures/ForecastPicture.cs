@@ -10,6 +10,7 @@ internal static class ForecastPicture
     private const int Width = 1440;
     private const int Height = 860;
     private const float LabelSize = 17;
+    private const int LevelStep = 5;
 
     /// <summary>Writes the picture.</summary>
     /// <param name="weeks">The shares today and after each week.</param>
@@ -22,7 +23,7 @@ internal static class ForecastPicture
         var last = weeks.Count - 1;
         var top = stages.All.Max(stage => Math.Max(longRun[stage], weeks.Max(week => week[stage]))) * 108;
         var lines = stages.All.Select((stage, number) => (Stage: stage, Color: ColorOf(stages, number), Level: longRun[stage] * 100)).ToList();
-        Frame(plot, last, top);
+        Frame(plot, stages, last, top);
         foreach (var (stage, color, level) in lines)
         {
             var longRunLine = plot.Add.Line(0, level, last, level);
@@ -39,10 +40,10 @@ internal static class ForecastPicture
     private static Color ColorOf(StageOrder stages, int number) =>
         number < stages.InUse.Count ? StageColors.OfStage(number) : StageColors.OfEnd(number - stages.InUse.Count);
 
-    private static void Frame(Plot plot, int last, double top)
+    private static void Frame(Plot plot, StageOrder stages, int last, double top)
     {
         plot.Font.Set(PictureFont.Name);
-        plot.Title("Share of the pool in each stage, lost and scrapped crates replaced", 24);
+        plot.Title("Share of the pool in each stage" + (stages.Ends.Count > 0 ? $" when {string.Join(" and ", stages.Ends)} crates are replaced" : string.Empty), 24);
         plot.XLabel("weeks from now", LabelSize);
         plot.YLabel("share of the pool in %", LabelSize);
         foreach (var label in new[] { plot.Axes.Title.Label, plot.Axes.Bottom.Label, plot.Axes.Left.Label })
@@ -55,6 +56,8 @@ internal static class ForecastPicture
         plot.Axes.Bottom.TickGenerator = new NumericManual(ticks, [.. ticks.Select(week => week == 0 ? "today" : $"{week:0}")]);
         plot.Axes.Bottom.TickLabelStyle.FontSize = LabelSize;
         plot.Axes.Left.TickLabelStyle.FontSize = LabelSize;
+        double[] levels = [.. Enumerable.Range(0, ((int)top / LevelStep) + 1).Select(level => (double)(level * LevelStep))];
+        plot.Axes.Left.TickGenerator = new NumericManual(levels, [.. levels.Select(level => $"{level:0}")]);
         plot.Axes.Right.IsVisible = false;
         plot.Axes.Top.IsVisible = false;
         plot.Axes.Color(StageColors.Ink);
@@ -68,6 +71,8 @@ internal static class ForecastPicture
     {
         var distance = top / 26;
         var place = double.NegativeInfinity;
+        var margin = plot.Add.Rectangle(last * 1.005, last * 2, -10, top * 2);
+        (margin.FillColor, margin.LineWidth) = (Colors.White, 0);
         foreach (var (stage, color, level) in lines.OrderBy(line => line.Level))
         {
             place = Math.Max(level, place + distance);

@@ -8,6 +8,7 @@ internal sealed class LabelPlaces(StageLayout layout)
     private const double Taken = 1000;
     private const double Crossed = 4;
     private const double OffCenter = 12;
+    private const double Margin = 11;
 
     private readonly List<CoordinateRect> _taken = [];
 
@@ -24,11 +25,14 @@ internal sealed class LabelPlaces(StageLayout layout)
     }
 
     private double Cost(CoordinateRect patch, Arrow own) =>
-        (Taken * _taken.Concat(layout.Nodes.Select(node => node.Box)).Count(box => Overlap(box, patch))) +
+        (Taken * _taken.Concat(layout.Nodes.Select(node => node.Box)).Count(box => Overlap(box, Widened(patch)))) +
         (Crossed * layout.Arrows.Where(arrow => arrow != own).Sum(arrow => arrow.Line.Count(patch.Contains)));
 
     private static CoordinateRect PatchAt(Coordinates center, PixelSize size) =>
         new(center.X - (size.Width / 2) - 3, center.X + (size.Width / 2) + 3, center.Y - (size.Height / 2) - 1, center.Y + (size.Height / 2) + 1);
+
+    private static CoordinateRect Widened(CoordinateRect patch) =>
+        new(patch.Left - Margin, patch.Right + Margin, patch.Bottom - Margin, patch.Top + Margin);
 
     private static bool Overlap(CoordinateRect a, CoordinateRect b) => a.Left < b.Right && b.Left < a.Right && a.Bottom < b.Top && b.Bottom < a.Top;
 }

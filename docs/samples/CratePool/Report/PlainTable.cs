@@ -1,5 +1,3 @@
-using System.Globalization;
-
 namespace CratePool.Report;
 
 /// <summary>A plain table: the first column flush left, the others flush right under their headings.</summary>
