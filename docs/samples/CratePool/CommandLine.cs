@@ -132,12 +132,13 @@ internal sealed class CommandLine
     private static char ParseSeparator(ArgumentResult result)
     {
         var text = result.Tokens[0].Value;
-        if (text.Length != 1)
+        if (text is ['\t' or (>= ' ' and <= '~' and not '"')])
         {
-            result.AddError($"--separator takes one character, such as ';', not '{text}'.");
+            return text[0];
         }
 
-        return text[0];
+        result.AddError($"--separator takes one character, such as ';', but no quote, not '{text}'.");
+        return default;
     }
 
     private static int ParseWeeks(ArgumentResult result)

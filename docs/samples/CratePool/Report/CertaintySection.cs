@@ -18,14 +18,15 @@ internal static class CertaintySection
 
         output.WriteLine();
         output.Paragraph(
-            "As a forecast they are much less sure. A certificate says nothing about whether the weeks to come are like the weeks of the log, " +
+            $"Statistically: the figures rest on {Prose.Count(pool.Counts.TotalCount, "weekly move", "weekly moves")}. As a forecast they are much less sure. A certificate says nothing about whether the weeks to come are like the weeks of the log, " +
             "nor how well few moves show a rare one; the table at the top shows how many moves each row rests on.");
-        if (pool.Options.LostAfterWeeks > 0 && pool.Chains.Stages.Ends.Contains(pool.Options.LostStage))
+        if (pool.Options.LostAfterWeeks > 0)
         {
+            var unknown = Prose.Count(pool.Options.LostAfterWeeks, "week", "weeks");
+            var known = Prose.Count((long)Math.Ceiling((pool.Log.LogEnd - pool.Log.FirstTime) / TimeSpan.FromDays(7)), "week", "weeks");
             output.Paragraph(
-                $"A crate counts as \"{pool.Options.LostStage}\" after {Prose.Count(pool.Options.LostAfterWeeks, "week", "weeks")} without a scan. Those lost in the last " +
-                $"{Prose.Count(pool.Options.LostAfterWeeks, "week", "weeks")} of the log's {Prose.Whole((pool.Log.LogEnd - pool.Log.FirstTime).TotalDays / 7)} are not known " +
-                "yet, so the losses are rather more than the figures say, and the crates in use rather fewer.");
+                $"A crate counts as \"{pool.Options.LostStage}\" after {unknown} without a scan, and the log covers {known}. Crates lost in its last {unknown} are " +
+                "not known to be, so the losses are rather more than the figures say, and the crates in use rather fewer.");
         }
 
         output.Paragraph(

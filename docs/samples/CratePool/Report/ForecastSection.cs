@@ -19,7 +19,7 @@ internal static class ForecastSection
         var table = new PlainTable("stage", "today", "in 4 weeks", "in 13 weeks");
         foreach (var stage in stages.All)
         {
-            table.Add(stage, Prose.Count(pool.Stock(stage)), Prose.Whole(ahead[0].Shares[stage] * pool.CratesInUse), Prose.Whole(ahead[1].Shares[stage] * pool.CratesInUse));
+            table.Add([stage, Prose.Count(pool.Stock(stage)), .. ahead.Select(step => Prose.Expected(step.Shares[stage] * pool.CratesInUse))]);
         }
 
         table.Write(output);

@@ -15,22 +15,23 @@ internal static class GoalSection
             return;
         }
 
-        var itself = pool.Chains.Life.TimeTo(goal.Stage, evidence.Options);
-        var place = pool.Chains.Refilled?.TimeTo(goal.Stage, evidence.Options);
+        var (life, stages) = (pool.Chains.Life, pool.Chains.Stages);
+        var itself = life.TimeTo(goal.Stage, evidence.Options);
+        var place = (pool.Chains.Refilled ?? life).TimeTo(goal.Stage, evidence.Options);
         evidence.Add($"chances of getting \"{goal.Stage}\"", itself.Certificate);
+        evidence.Add($"weeks until first \"{goal.Stage}\"", place.Certificate);
+        var isCertain = stages.InUse.All(stage => itself.ReachingProbability(stage) == 1);
         output.Paragraph(
-            $"Not every crate gets \"{goal.Stage}\" before its life ends, so two figures belong together: the chance that the crate itself " +
-            "gets there, and the mean time until it, or the new crate that took its place, is there.");
-        var table = new PlainTable("stage today", "gets there itself", "weeks until it or its replacement is there");
-        foreach (var stage in pool.Chains.Stages.InUse.Where(stage => stage != goal.Stage))
+            isCertain
+                ? "Every crate gets there in the end."
+                : $"Not every crate gets \"{goal.Stage}\" before its life ends, so two figures belong together: the chance that the crate itself " +
+                  "gets there, and the mean time until it, or the new crate that took its place, is there.");
+        var table = new PlainTable("stage today", "gets there itself", isCertain ? "weeks on average" : "weeks until it or its replacement is there");
+        foreach (var stage in stages.InUse.Where(stage => stage != goal.Stage))
         {
-            table.Add(stage, Percent.Column(itself.ReachingProbability(stage)), place is null ? "-" : Prose.OneDecimal(place.Mean(stage)));
+            table.Add(stage, Percent.Column(itself.ReachingProbability(stage)), Prose.OneDecimal(place.Mean(stage)));
         }
 
         table.Write(output);
-        if (place is not null)
-        {
-            evidence.Add($"weeks until first \"{goal.Stage}\"", place.Certificate);
-        }
     }
 }

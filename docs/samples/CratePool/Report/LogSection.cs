@@ -35,7 +35,7 @@ internal static class LogSection
     private static void WriteStages(TextWriter output, Pool pool)
     {
         var (life, stages) = (pool.Chains.Life, pool.Chains.Stages);
-        var table = new PlainTable("stage", "crates now", "moves seen out of it", "stays", "most often next", "");
+        var table = new PlainTable("stage", "crates now", "moves seen out of it", "stays", "most often next", "chance");
         foreach (var stage in stages.InUse)
         {
             var next = life.TransitionsFrom(stage).Where(move => move.To != stage).MaxBy(move => move.Probability);

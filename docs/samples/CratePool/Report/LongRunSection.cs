@@ -30,10 +30,13 @@ internal static class LongRunSection
         var start = refilled.StartingIn(pool.StockOver(refilled.States));
         var (four, thirteen) = (start.After(4, evidence.Options), start.After(13, evidence.Options));
         output.Paragraph(
-            stages.Ends.Count == 0
-                ? "No stage of the log ends a crate's life, so nothing has to be replaced."
+            (stages.Ends.Count == 0
+                ? "No stage of the log ends a crate's life, so nothing has to be replaced. "
                 : $"Here the pool is kept full: a crate found to be {Prose.List(stages.Ends, "or")} counts as such for one week, then a new one " +
-                  $"takes its place and is \"{pool.Options.NewStage.Stage}\". Whatever the pool looks like today, it settles at the shares of the last column.");
+                  $"takes its place and is \"{pool.Options.NewStage.Stage}\". ") +
+            (classes[0].Period == 1
+                ? "Whatever the pool looks like today, it settles at the long-run shares."
+                : $"The pool swings in a cycle of {Prose.Count(classes[0].Period)} weeks and does not settle; the long-run shares are the mean of the cycle."));
         var table = new PlainTable("stage", "today", "in 4 weeks", "in 13 weeks", "long run", "crates");
         foreach (var stage in stages.All)
         {
@@ -43,7 +46,7 @@ internal static class LongRunSection
                 Percent.Column(four[stage]),
                 Percent.Column(thirteen[stage]),
                 Percent.Column(longRun[stage]),
-                Prose.OneDecimal(longRun[stage] * pool.CratesInUse));
+                Prose.Expected(longRun[stage] * pool.CratesInUse));
         }
 
         table.Write(output);

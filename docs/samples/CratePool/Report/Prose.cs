@@ -36,23 +36,12 @@ internal static class Prose
 
     internal static string Count(long number, string one, string many) => $"{Count(number)} {(number == 1 ? one : many)}";
 
-    internal static string Whole(double number) => number.ToString("N0", CultureInfo.InvariantCulture);
+    /// <summary>How many crates to expect: whole ones, unless they are few.</summary>
+    internal static string Expected(double crates) => crates.ToString(crates >= 10 ? "N0" : "N1", CultureInfo.InvariantCulture);
 
     internal static string OneDecimal(double number) => double.IsFinite(number) ? number.ToString("N1", CultureInfo.InvariantCulture) : "never for sure";
 
     internal static string Date(DateTimeOffset time) => time.ToString("d MMMM yyyy", CultureInfo.InvariantCulture);
-
-    /// <summary>A bound in two digits, rounded up, so that the sentence stays true.</summary>
-    internal static string Bound(double bound)
-    {
-        if (bound == 0 || !double.IsFinite(bound))
-        {
-            return bound.ToString(CultureInfo.InvariantCulture);
-        }
-
-        var unit = Math.Pow(10, Math.Floor(Math.Log10(bound)) - 1);
-        return (Math.Ceiling(bound / unit) * unit).ToString("0.0E+0", CultureInfo.InvariantCulture);
-    }
 
     internal static string List(IReadOnlyList<string> stages, string last) => stages.Count switch
     {
