@@ -38,14 +38,14 @@ internal static class LogSection
         var table = new PlainTable("stage", "crates now", "moves seen out of it", "stays", "most often next", "chance");
         foreach (var stage in stages.InUse)
         {
-            var next = life.TransitionsFrom(stage).Where(move => move.To != stage).MaxBy(move => move.Probability);
+            var moves = life.TransitionsFrom(stage).Where(move => move.To != stage).OrderByDescending(move => move.Probability).ToList();
             table.Add(
                 stage,
                 Prose.Count(pool.Stock(stage)),
                 Prose.Count(pool.Counts.TotalFrom(stage)),
                 Percent.Column(life[stage, stage]),
-                next.To ?? "-",
-                next.To is null ? "" : Percent.Column(next.Probability));
+                moves.Count > 0 ? moves[0].To : "none seen",
+                moves.Count > 0 ? Percent.Column(moves[0].Probability) : "-");
         }
 
         table.Write(output);
