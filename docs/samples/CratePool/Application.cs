@@ -1,3 +1,4 @@
+using System.Globalization;
 using CratePool.Pictures;
 using CratePool.Report;
 using Stochastic.Chains;
@@ -38,8 +39,10 @@ internal sealed class Application(TextWriter output, TextWriter errors, ConsoleP
     private int Answer(PoolOptions options)
     {
         var pool = Pool.Of(options, PoolLog.Count(options, progress, cancellation));
+        using var report = new StringWriter(CultureInfo.InvariantCulture);
+        PoolReport.Write(report, pool, new SolveOptions { Progress = progress, CancellationToken = cancellation });
         progress.Clear();
-        PoolReport.Write(output, pool, new SolveOptions { CancellationToken = cancellation });
+        output.Write(report);
         progress.Show("drawing the pictures");
         var pictures = PoolPictures.Draw(pool, cancellation);
         progress.Clear();

@@ -11,8 +11,11 @@ internal static class ForecastPicture
     private const int Height = 860;
     private const float LabelSize = 17;
     private const int LevelStep = 5;
+    private const int LinesOfText = 26;
+    private const int MostLines = 22;
+    private const int LongestName = 28;
 
-    /// <summary>Writes the picture.</summary>
+    /// <summary>Writes the picture; of very many stages those with the largest shares.</summary>
     /// <param name="weeks">The shares today and after each week.</param>
     /// <param name="longRun">The shares that the pool settles at.</param>
     /// <param name="stages">The stages, in the order of their colors.</param>
@@ -22,7 +25,11 @@ internal static class ForecastPicture
         using var plot = new Plot();
         var last = weeks.Count - 1;
         var top = stages.All.Max(stage => Math.Max(longRun[stage], weeks.Max(week => week[stage]))) * 108;
-        var lines = stages.All.Select((stage, number) => (Stage: stage, Color: ColorOf(stages, number), Level: longRun[stage] * 100)).ToList();
+        var lines = stages.All
+            .Select((stage, number) => (Stage: stage, Color: ColorOf(stages, number), Level: longRun[stage] * 100))
+            .OrderByDescending(line => line.Level)
+            .Take(MostLines)
+            .ToList();
         Frame(plot, stages, last, top);
         foreach (var (stage, color, level) in lines)
         {
@@ -69,18 +76,43 @@ internal static class ForecastPicture
     /// <summary>Writes the stages beside the ends of their lines, pushed apart where they would lie on each other.</summary>
     private static void LabelLines(Plot plot, int last, double top, List<(string Stage, Color Color, double Level)> lines)
     {
-        var distance = top / 26;
-        var place = double.NegativeInfinity;
         var margin = plot.Add.Rectangle(last * 1.005, last * 2, -10, top * 2);
         (margin.FillColor, margin.LineWidth) = (Colors.White, 0);
-        foreach (var (stage, color, level) in lines.OrderBy(line => line.Level))
+        var ascending = lines.OrderBy(line => line.Level).ToList();
+        var places = PushApart([.. ascending.Select(line => line.Level)], top * 0.91, top / LinesOfText);
+        foreach (var ((stage, color, level), place) in ascending.Zip(places))
         {
-            place = Math.Max(level, place + distance);
             var pointer = plot.Add.Line(last, level, last * 1.03, place);
             (pointer.LineColor, pointer.LineWidth) = (color, 1);
-            var text = plot.Add.Text($"{stage}, {Percent.Short(level / 100)} in the long run", last * 1.035, place);
-            (text.LabelFontName, text.LabelFontSize, text.LabelFontColor) = (PictureFont.Name, LabelSize, color);
-            (text.LabelAlignment, text.LabelBackgroundColor) = (Alignment.MiddleLeft, Colors.White);
+            Write(plot, $"{Shorten(stage)}: {Percent.Short(level / 100)}", last * 1.035, place, color);
         }
+
+        Write(plot, "in the long run", last * 1.035, top * 0.97, StageColors.Faint);
     }
+
+    /// <summary>Places at least a distance apart and none above the top, as near to the levels as a push up and one down leave them.</summary>
+    private static double[] PushApart(double[] levels, double top, double distance)
+    {
+        var places = levels.ToArray();
+        for (var k = 1; k < places.Length; k++)
+        {
+            places[k] = Math.Max(places[k], places[k - 1] + distance);
+        }
+
+        for (var k = places.Length - 1; k >= 0; k--)
+        {
+            places[k] = Math.Min(places[k], k == places.Length - 1 ? top : places[k + 1] - distance);
+        }
+
+        return places;
+    }
+
+    private static void Write(Plot plot, string text, double x, double y, Color color)
+    {
+        var label = plot.Add.Text(text, x, y);
+        (label.LabelFontName, label.LabelFontSize, label.LabelFontColor) = (PictureFont.Name, LabelSize, color);
+        label.LabelAlignment = Alignment.MiddleLeft;
+    }
+
+    private static string Shorten(string stage) => stage.Length <= LongestName ? stage : string.Concat(stage.AsSpan(0, LongestName - 1), "…");
 }

@@ -18,8 +18,9 @@ internal static class CertaintySection
 
         output.WriteLine();
         output.Paragraph(
-            $"Statistically: the figures rest on {Prose.Count(pool.Counts.TotalCount, "weekly move", "weekly moves")}. As a forecast they are much less sure. A certificate says nothing about whether the weeks to come are like the weeks of the log, " +
-            "nor how well few moves show a rare one; the table at the top shows how many moves each row rests on.");
+            $"Statistically: the figures rest on {Prose.Count(pool.Counts.TotalCount, "weekly move", "weekly moves")}. As a forecast they are much less " +
+            "sure. A certificate says nothing about whether the weeks to come are like the weeks of the log, nor how well few moves show a rare one; " +
+            "the table at the top shows how many moves each row rests on.");
         if (pool.Options.LostAfterWeeks > 0)
         {
             var unknown = Prose.Count(pool.Options.LostAfterWeeks, "week", "weeks");
