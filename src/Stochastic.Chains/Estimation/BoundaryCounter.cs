@@ -39,6 +39,7 @@ internal struct BoundaryCounter(PeriodGrid periods, MoveCounter moves, LogTally 
         if (boundary >= periods.Count)
         {
             tally.UnfinishedPeriodEvents++;
+            FillToLastBoundary();
             return;
         }
 
@@ -48,6 +49,16 @@ internal struct BoundaryCounter(PeriodGrid periods, MoveCounter moves, LogTally 
         }
 
         Take(boundary, scan.State);
+    }
+
+    /// <summary>Up to an event after the last boundary the item is where it was, at that boundary too.</summary>
+    private void FillToLastBoundary()
+    {
+        if (_boundary != None && _boundary < periods.Count - 1)
+        {
+            Take(periods.Count - 1, _state);
+            tally.FilledPeriods++;
+        }
     }
 
     private void TakeEnd(Scan last, Silence silence, long logEnd)

@@ -13,7 +13,7 @@ internal static class CalendarBoundaries
         var previous = first - 1;
         for (var step = StepBefore(period, first); Date(period, step) is { } date; step++)
         {
-            var boundary = FirstInstant(date, period.TimeZone);
+            var boundary = LocalTime.StartOfDay(date, period.TimeZone);
             if (boundary > last)
             {
                 break;
@@ -27,19 +27,6 @@ internal static class CalendarBoundaries
         }
 
         return [.. boundaries];
-    }
-
-    /// <summary>The first instant of a local day, in UTC ticks.</summary>
-    internal static long FirstInstant(DateOnly date, TimeZoneInfo zone)
-    {
-        var local = date.ToDateTime(TimeOnly.MinValue);
-        while (zone.IsInvalidTime(local))
-        {
-            local = local.AddMinutes(1); // clocks skip midnight: the day begins where they land
-        }
-
-        var offset = zone.IsAmbiguousTime(local) ? zone.GetAmbiguousTimeOffsets(local).Max() : zone.GetUtcOffset(local);
-        return local.Ticks - offset.Ticks;
     }
 
     /// <summary>A step from the anchor whose date lies before the instant, or the first date there is.</summary>

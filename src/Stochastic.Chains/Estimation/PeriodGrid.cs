@@ -13,7 +13,7 @@ internal sealed class PeriodGrid
         if (period.Unit == LogPeriodUnit.Elapsed)
         {
             _length = period.Length.Ticks;
-            _first = firstEvent + RemainderToNext(firstEvent - CalendarBoundaries.FirstInstant(period.Anchor, period.TimeZone), _length);
+            _first = firstEvent + RemainderToNext(firstEvent - LocalTime.StartOfDay(period.Anchor, period.TimeZone), _length);
             Count = logEnd < _first ? 0 : ((logEnd - _first) / _length) + 1;
         }
         else

@@ -1,4 +1,5 @@
 using System.Globalization;
+using Stochastic.Chains.Estimation;
 
 namespace Stochastic.Chains.Interchange;
 
@@ -78,34 +79,23 @@ internal sealed class TimeReader(EventLogColumns columns)
             return TimeProblem.NoTimeZone;
         }
 
-        if (zone.IsInvalidTime(local))
+        if (LocalTime.Instants(local, zone) is not ({ } earlier, { } later))
         {
             return TimeProblem.NeverComes;
         }
 
-        var offset = zone.GetUtcOffset(local);
-        if (zone.IsAmbiguousTime(local))
+        if (earlier != later && columns.AmbiguousTimes == AmbiguousTimes.Refuse)
         {
-            switch (columns.AmbiguousTimes)
-            {
-                case AmbiguousTimes.Earlier:
-                    offset = zone.GetAmbiguousTimeOffsets(local).Max();
-                    break;
-                case AmbiguousTimes.Later:
-                    offset = zone.GetAmbiguousTimeOffsets(local).Min();
-                    break;
-                default:
-                    return TimeProblem.ComesTwice;
-            }
+            return TimeProblem.ComesTwice;
         }
 
-        var utc = local.Ticks - offset.Ticks;
+        var utc = columns.AmbiguousTimes == AmbiguousTimes.Later ? later : earlier;
         if (utc < DateTime.MinValue.Ticks || utc > DateTime.MaxValue.Ticks)
         {
             return TimeProblem.Format;
         }
 
-        time = new DateTimeOffset(local, offset);
+        time = new DateTimeOffset(local, new TimeSpan(local.Ticks - utc));
         return TimeProblem.None;
     }
 }

@@ -1,4 +1,4 @@
-using System.Globalization;
+using Stochastic.Chains.Tests.Support;
 
 namespace Stochastic.Chains.Tests.Estimation;
 
@@ -108,22 +108,15 @@ public sealed class GivenCountsTests
     [Fact]
     public void The_text_is_a_table_with_totals_the_same_in_every_culture()
     {
-        var before = CultureInfo.CurrentCulture;
-        CultureInfo.CurrentCulture = CultureInfo.GetCultureInfo("de-DE");
-        try
-        {
-            TransitionCounts.FromCounts(Weather, new long[,] { { 1049, 350 }, { 0, 687 } }).ToString().ReplaceLineEndings("\n").Should().Be(
-                """
-                2,086 moves between 2 states
-                from \ to    dry  wet  total
-                dry        1,049  350  1,399
-                wet            ·  687    687
-                """);
-        }
-        finally
-        {
-            CultureInfo.CurrentCulture = before;
-        }
+        using var german = new CommaCulture();
+
+        TransitionCounts.FromCounts(Weather, new long[,] { { 1049, 350 }, { 0, 687 } }).ToString().ReplaceLineEndings("\n").Should().Be(
+            """
+            2,086 moves between 2 states
+            from \ to    dry  wet  total
+            dry        1,049  350  1,399
+            wet            ·  687    687
+            """);
     }
 
     [Fact]
