@@ -13,13 +13,13 @@ internal sealed class StationaryTrial
     private static readonly ConcurrentDictionary<string, StationaryTrial[]> Trials = new();
 
     private readonly SampleChain _sample;
-    private readonly double[] _table;
+    internal double[] Table { get; }
 
     internal StationaryTrial(SampleChain sample)
     {
         _sample = sample;
         Exact = sample.ToExact().Stationary();
-        _table = [.. sample.Matrix.Cast<double>()];
+        Table = [.. sample.Matrix.Cast<double>()];
     }
 
     /// <summary>The families whose chains all have one recurrent class of all states.</summary>
@@ -35,7 +35,7 @@ internal sealed class StationaryTrial
 
     internal int[] States => [.. Enumerable.Range(0, Count)];
 
-    internal DenseRates Dense => new(_table, Count);
+    internal DenseRates Dense => new(Table, Count);
 
     internal SparseRates Sparse
     {
@@ -65,7 +65,7 @@ internal sealed class StationaryTrial
     /// <summary>The vector that state reduction computes in doubles of extended range.</summary>
     internal double[] Reduced()
     {
-        var reduction = new GeneralReduction<ScaledDouble>([.. _table.Select(rate => (ScaledDouble)rate)], Count, Count, Count - 1);
+        var reduction = new GeneralReduction<ScaledDouble>([.. Table.Select(rate => (ScaledDouble)rate)], Count, Count, Count - 1);
         reduction.Eliminate(null, CancellationToken.None);
         var weights = new ScaledDouble[Count];
         weights[^1] = ScaledDouble.One;
