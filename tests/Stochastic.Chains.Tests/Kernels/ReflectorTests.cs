@@ -23,7 +23,7 @@ public class ReflectorTests
         Math.Abs(image).Should().BeApproximately(length, Math.Max(1e-15 * length, double.Epsilon));
         (beta * (1 + (vector[1] * vector[1]))).Should().BeApproximately(2, 1e-15, "only then is I − β v vᵀ orthogonal");
         var product = beta * ((head / size) + (vector[1] * (tail / size)));
-        ((head / size) - product).Should().BeApproximately(image / size, 1e-15);
+        ((head / size) - product).Should().BeApproximately(image / size, Math.Max(1e-15, double.Epsilon / size));
         ((tail / size) - (vector[1] * product)).Should().BeApproximately(0, 1e-15);
     }
 
