@@ -6,10 +6,32 @@ namespace Stochastic.Chains.Kernels;
 internal static class PowerOfTwoScale
 {
     /// <summary>
-    /// The exponent of the largest entry, rounded down to an even one, so that square roots of entries scale exactly too; 0 for the zero
-    /// matrix. Refuses a matrix that is not n × n or has entries that are not finite.
+    /// Brings the largest entry to between one and four and returns the exponent that was taken out; 0 for the zero matrix. Refuses a
+    /// matrix that is not n × n or has entries that are not finite.
     /// </summary>
-    internal static int Exponent(ReadOnlySpan<double> matrix, int order)
+    internal static int Normalize(Span<double> matrix, int order)
+    {
+        var exponent = Exponent(matrix, order);
+        Apply(matrix, -exponent);
+        return exponent;
+    }
+
+    /// <summary>Multiplies each entry by 2^exponent.</summary>
+    internal static void Apply(Span<double> matrix, int exponent)
+    {
+        if (exponent == 0)
+        {
+            return;
+        }
+
+        foreach (ref var entry in matrix)
+        {
+            entry = Math.ScaleB(entry, exponent);
+        }
+    }
+
+    // Rounded down to an even one, so that square roots of entries scale exactly too.
+    private static int Exponent(ReadOnlySpan<double> matrix, int order)
     {
         if (order < 1 || matrix.Length != (long)order * order)
         {
@@ -28,19 +50,5 @@ internal static class PowerOfTwoScale
         }
 
         return largest == 0 ? 0 : Math.ILogB(largest) & ~1;
-    }
-
-    /// <summary>Multiplies each entry by 2^exponent.</summary>
-    internal static void Apply(Span<double> matrix, int exponent)
-    {
-        if (exponent == 0)
-        {
-            return;
-        }
-
-        foreach (ref var entry in matrix)
-        {
-            entry = Math.ScaleB(entry, exponent);
-        }
     }
 }

@@ -66,10 +66,10 @@ internal sealed class RealSchurForm
     /// <inheritdoc cref="Of(ReadOnlySpan{double}, int, bool, CancellationToken)"/>
     internal static RealSchurForm Of(ReadOnlySpan<double> matrix, int order, bool balance, int sweepCap, CancellationToken cancellation)
     {
-        var exponent = PowerOfTwoScale.Exponent(matrix, order);
         var scaled = matrix.ToArray();
-        PowerOfTwoScale.Apply(scaled, -exponent);
+        var exponent = PowerOfTwoScale.Normalize(scaled, order);
         var form = new RealSchurForm(scaled, order, balance ? Balancing.Apply(scaled, order) : null);
+        exponent += PowerOfTwoScale.Normalize(scaled, order);
         HessenbergForm.Reduce(scaled, order, form.TransposedBasis, cancellation);
         form.Iterate(sweepCap, cancellation);
         PowerOfTwoScale.Apply(scaled, exponent);

@@ -140,14 +140,8 @@ internal static class SchurEigenvectors
 
     private static double[] ScaledQuasitriangle(RealSchurForm form, out int exponent)
     {
-        exponent = PowerOfTwoScale.Exponent(form.Quasitriangle, form.Order);
-        if (exponent == 0)
-        {
-            return form.Quasitriangle;
-        }
-
         var matrix = form.Quasitriangle.AsSpan().ToArray();
-        PowerOfTwoScale.Apply(matrix, -exponent);
+        exponent = PowerOfTwoScale.Normalize(matrix, form.Order);
         return matrix;
     }
 
