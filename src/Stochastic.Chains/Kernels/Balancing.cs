@@ -5,8 +5,9 @@ namespace Stochastic.Chains.Kernels;
 /// entry is rounded unless it falls below the normal range (Parlett and Reinsch 1969).
 /// </summary>
 /// <remarks>
-/// It helps eigenvalues of badly scaled matrices and costs little, but a matrix whose small entries are rounding noise is made worse;
-/// hence the choice is the caller's.
+/// It helps eigenvalues of badly scaled matrices and costs little. It can also harm: where small entries are rounding noise, and for
+/// vectors, whose residual in the original scale grows with the spread of D (James, Langou and Lowery 2014, On matrix balancing and
+/// eigenvector computation). Hence the choice is the caller's.
 /// </remarks>
 internal static class Balancing
 {

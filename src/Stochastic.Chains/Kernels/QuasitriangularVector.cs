@@ -136,6 +136,7 @@ internal readonly ref struct QuasitriangularVector(
             (_imaginary[row], _imaginary[row + 1]) = (_imaginary[row + 1], _imaginary[row]);
         }
 
+        a = AtLeastSmallest(a);
         var factor = c / a;
         Subtract(row + 1, factor * Entry(row));
         DivideBy(row + 1, d - (factor * b));
@@ -145,11 +146,7 @@ internal readonly ref struct QuasitriangularVector(
 
     private void DivideBy(int row, Complex pivot)
     {
-        if (Magnitude(pivot) < _smallestPivot)
-        {
-            pivot = _smallestPivot;
-        }
-
+        pivot = AtLeastSmallest(pivot);
         var size = Math.Max(Math.Abs(_real[row]), Math.Abs(_imaginary[row]));
         if (size > Math.Min(1, Magnitude(pivot)) * LargestEntry)
         {
@@ -185,6 +182,8 @@ internal readonly ref struct QuasitriangularVector(
         _real[row] -= value.Real;
         _imaginary[row] -= value.Imaginary;
     }
+
+    private Complex AtLeastSmallest(Complex pivot) => Magnitude(pivot) < _smallestPivot ? _smallestPivot : pivot;
 
     private Complex Entry(int row) => new(_real[row], _imaginary[row]);
 

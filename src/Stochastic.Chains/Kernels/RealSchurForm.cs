@@ -12,7 +12,8 @@ namespace Stochastic.Chains.Kernels;
 /// <remarks>
 /// Backward stable: T is exact for a matrix within a modest multiple of n u ‖A‖ of the balanced A. It always ends: after 10, 20, ...
 /// sweeps without an eigenvalue the shifts are replaced by exceptional ones, and when 30 n sweeps are spent in total the form is
-/// returned as far as it came, marked as not converged. No sequence of inputs is known that needs so many.
+/// returned as far as it came, marked as not converged; the hard families of the tests take less than a third of that. Eigenvalues
+/// beyond the range of a double become infinite, parts of T below it zero.
 /// </remarks>
 internal sealed class RealSchurForm
 {

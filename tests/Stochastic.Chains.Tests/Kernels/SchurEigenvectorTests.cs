@@ -146,6 +146,33 @@ public class SchurEigenvectorTests
     }
 
     [Fact]
+    public void A_block_with_an_entry_lost_below_the_range_still_gives_finite_vectors()
+    {
+        // Rows 4 and 5 form a 2 × 2 block whose upper right entry is about 1e-371: zero in the end.
+        double[] matrix =
+        [
+            1e-93, 0, 0, 0, 0, 0, 0, 1e-178,
+            0, 1e-266, 0, 0, 0, 0, 0, 0,
+            1e-257, 1e-178, 0, 0, 0, 0, 0, 0,
+            0, 0, 1e-280, 0, 0, 1e-149, 0, 0,
+            1e-238, 0, 1e-170, 1e-285, 1e-67, 0, 0, 0,
+            0, 0, 1e-176, 1e-214, 0, 1e-38, 1e-23, 1e-165,
+            0, 0, 1e-165, 1e-189, 1e-13, 0, 0, 0,
+            0, 0, 1e-130, 0, 1e-133, 0, 0, 0,
+        ];
+        var form = RealSchurForm.Of(matrix, 8, balance: false, CancellationToken.None);
+        var eigenvalues = form.Eigenvalues();
+        var right = SchurEigenvectors.Right(form, CancellationToken.None);
+        var left = SchurEigenvectors.Left(form, CancellationToken.None);
+
+        for (var index = 0; index < 8; index++)
+        {
+            EigenChecks.Residual(matrix, eigenvalues[index], right[index], isLeft: false).Should().BeLessThanOrEqualTo(EigenChecks.Bound(8));
+            EigenChecks.Residual(matrix, eigenvalues[index], left[index], isLeft: true).Should().BeLessThanOrEqualTo(EigenChecks.Bound(8));
+        }
+    }
+
+    [Fact]
     public void The_left_vector_at_one_is_the_stationary_distribution_of_the_urn()
     {
         // Binomial(20, 1/2): Kac, Amer. Math. Monthly 54 (1947) 369-391.
