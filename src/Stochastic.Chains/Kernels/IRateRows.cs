@@ -19,6 +19,13 @@ internal interface IRateRows
     double Dot(int row, ReadOnlySpan<double> vector);
 }
 
+/// <summary>An algorithm that runs on rates without knowing their storage.</summary>
+internal interface IRateAlgorithm<TResult>
+{
+    TResult Run<TRows>(TRows rows)
+        where TRows : struct, IRateRows;
+}
+
 /// <summary>The rows of a row-major square table.</summary>
 internal readonly struct DenseRates(double[] table, int size) : IRateRows
 {

@@ -97,6 +97,12 @@ internal sealed class TransitionMatrix
         ? algorithm.Run(new DenseGraph(_dense, Size))
         : algorithm.Run(new SparseGraph(_rowStarts!, _columns!));
 
+    /// <summary>Runs an algorithm on the rates, whatever the storage.</summary>
+    internal TResult OnRates<TResult, TAlgorithm>(TAlgorithm algorithm)
+        where TAlgorithm : IRateAlgorithm<TResult> => _dense is not null
+        ? algorithm.Run(new DenseRates(_dense, Size))
+        : algorithm.Run(new SparseRates(new CompressedRows(_rowStarts!, _columns!, _values!)));
+
     /// <summary>The strongly connected components; a dense matrix without zeros is recognized from one row and one column.</summary>
     internal Components FindComponents() => _dense is not null && DenseConnectivity.IsStronglyConnected(_dense, Size)
         ? new Components(new int[Size], 1)

@@ -42,6 +42,9 @@ public sealed class StationaryProblem
 
     internal TransitionMatrix Matrix { get; }
 
+    /// <summary>The positions of the states of the class in the whole chain.</summary>
+    internal ReadOnlySpan<int> Members => _members;
+
     /// <summary>The off-diagonal rates for a direct solve: row = from, column = to.</summary>
     internal RateTable Rates => RateTable.Among(Matrix, _members);
 
@@ -94,8 +97,6 @@ public sealed class StationaryProblem
             result[to] = Math.FusedMultiplyAdd(distribution[to], Stays[to], inflow);
         }
     }
-
-    internal int PositionOf(int state) => _positionOf[state];
 
     private CompressedRows GatherInflows()
     {

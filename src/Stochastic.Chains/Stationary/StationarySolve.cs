@@ -41,7 +41,7 @@ internal static class StationarySolve<TState>
             throw new ArgumentException(Messages.WrongLength(method, raw.Length, members.Length), nameof(vector));
         }
 
-        var sum = CompensatedSum.Of(raw);
+        var sum = vector.ProvedBasis == ErrorBasis.None ? CompensatedSum.Of(raw) : 1;
         var shares = new double[raw.Length];
         for (var k = 0; k < shares.Length; k++)
         {

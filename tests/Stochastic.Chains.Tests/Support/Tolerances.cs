@@ -6,6 +6,9 @@ internal static class Tolerances
     /// <summary>The largest relative error of one rounding of a double: u = 2⁻⁵³.</summary>
     internal const double UnitRoundoff = 1.1102230246251565e-16;
 
+    /// <summary>What a refined or doubled direct solve proves: four roundings.</summary>
+    internal const double FourRoundings = 4 * UnitRoundoff;
+
     /// <summary>
     /// What a figure recomputed exactly from a published case may differ by, relative to itself, where the case suggests no tolerance of
     /// its own: what nearly all of them suggest for code that avoids subtraction.
