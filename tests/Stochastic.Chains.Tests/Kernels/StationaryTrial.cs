@@ -60,6 +60,33 @@ internal sealed class StationaryTrial
     /// <summary>Whether a double can hold every probability.</summary>
     internal bool IsInRange => Exact.All(share => double.IsNormal(share.ToDouble()));
 
+    /// <summary>The states by ascending share.</summary>
+    internal int[] StatesByShare => [.. States.OrderBy(state => Exact[state])];
+
+    /// <summary>About how many jumps to other states it takes, at worst, to come to the state with the largest share.</summary>
+    internal double JumpsToLargest
+    {
+        get
+        {
+            var table = TableInOrder(StatesByShare).Select(rate => (ScaledDouble)rate).ToArray();
+            var jumps = new ScaledDouble[Count - 1];
+            for (var k = 0; k < jumps.Length; k++)
+            {
+                for (var j = 0; j < Count; j++)
+                {
+                    jumps[k] += j == k ? 0 : table[(k * Count) + j];
+                }
+            }
+
+            var reduction = new GeneralReduction<ScaledDouble>(table, Count, Count, Count - 1);
+            reduction.Eliminate(null, CancellationToken.None);
+            reduction.SolveRight(jumps);
+            return jumps.Max(number => number.ToDouble());
+        }
+    }
+
+    internal double[] TableInOrder(int[] order) => [.. order.SelectMany(from => order.Select(to => Table[(from * Count) + to]))];
+
     internal double[] Rounded() => [.. Exact.Select(share => share.ToDouble())];
 
     /// <summary>The vector that state reduction computes in doubles of extended range.</summary>
