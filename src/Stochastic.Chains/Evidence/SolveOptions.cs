@@ -24,6 +24,32 @@ public sealed record SolveOptions
     /// </summary>
     public long MemoryLimit { get; init; } = 2L << 30;
 
+    /// <summary>
+    /// Gets the number of threads that a solve may use, 1 or more. The answer has the same bits for any number. Default: 1, so that
+    /// a busy server keeps its other cores.
+    /// </summary>
+    /// <exception cref="ArgumentOutOfRangeException">Set to less than 1.</exception>
+    public int Parallelism
+    {
+        get;
+        init
+        {
+            ArgumentOutOfRangeException.ThrowIfLessThan(value, 1);
+            field = value;
+        }
+    }
+    = 1;
+
+    /// <summary>Refuses a solve that would need more memory than allowed, or more numbers than an array can hold.</summary>
+    /// <exception cref="MemoryLimitException">Too much.</exception>
+    internal void RequireMemory(int states, long bytes)
+    {
+        if (bytes > MemoryLimit || bytes / sizeof(double) > Array.MaxLength)
+        {
+            throw new MemoryLimitException(states, bytes, MemoryLimit);
+        }
+    }
+
     /// <summary>What a kernel calls with the part that is done, or null when nobody listens.</summary>
     internal Action<double>? Report(string stage) =>
         Progress is { } progress ? fraction => progress.Report(new SolveProgress(stage, fraction)) : null;

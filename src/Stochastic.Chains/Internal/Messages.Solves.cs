@@ -9,9 +9,9 @@ internal static partial class Messages
         $"The chain has {Text.Count(classes.Count, "recurrent class", "recurrent classes")}, so its long-run shares depend on the start: {Some(classes)}. " +
         "Ask StationaryPerClass() for the shares inside each, and Absorption() for the probability of ending in each.";
 
-    internal static string ShareOutOfRange(object state, long exponent) =>
-        $"The long-run share of {Text.Quoted(state)} is about 10^{Power(exponent)}, smaller than a double can hold. " +
-        "Leave the state out, or make the moves into it absorbing and ask TimeTo().";
+    internal static string ShareTooSmall(object state) =>
+        $"The long-run share of {Text.Quoted(state)} is smaller than a double can hold (about 10^-308). " +
+        "Leave the state out, or ask TimeTo() for how long it takes to get there.";
 
     internal static string TimeOutOfRange(object state, long exponent) =>
         $"The mean time from {Text.Quoted(state)} is about 10^{Power(exponent)}, larger than a double can hold. Treat the target as unreachable in practice.";

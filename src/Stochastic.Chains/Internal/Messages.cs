@@ -3,9 +3,15 @@ namespace Stochastic.Chains.Internal;
 /// <summary>The catalogue of messages about models and their input. Each carries the values, says what to do and ends with a period.</summary>
 internal static partial class Messages
 {
+    private const double LargestDeviationToRescale = 0.99;
+
     internal const string NoStates = "The chain has no states. Give at least one.";
     internal const string DeviationOutOfRange = "The largest deviation to rescale must be above 0 and below 1.";
     internal const string WeightsSumToZero = "All weights are zero, so they describe no distribution. Give at least one positive weight.";
+    internal const string RowAfterBuild = "The chain has been built already. Give its rows inside the call of Chain.Build.";
+
+    internal static string NullRow(int position) =>
+        $"Row number {Text.Count(position + 1)} is given for a null state. Give every state a label.";
 
     internal static string NullStateInList(int position) =>
         $"The state at position {Text.Count(position)} is null. Give every state a label.";
@@ -19,7 +25,7 @@ internal static partial class Messages
     internal static string DuplicateRow(object state) =>
         $"State {Text.Quoted(state)} is given two rows. Give all its moves in one.";
 
-    internal static string UnknownStateInMove(object state, object from, object to) =>
+    internal static string UnknownStateInMove(object state, object? from, object? to) =>
         $"The move {Text.Quoted(from)} to {Text.Quoted(to)} names {Text.Quoted(state)}, which is not in the list of states. Correct the label or add it to the list.";
 
     internal static string UnknownState<TState>(TState state, IReadOnlyCollection<TState> known) =>
@@ -45,10 +51,12 @@ internal static partial class Messages
 
     internal static string RowSum(object state, double sum)
     {
-        var deviation = Text.Short(Math.Abs(sum - 1));
+        var deviation = Math.Abs(sum - 1);
         var side = sum > 1 ? "above" : "below";
-        return $"The row of {Text.Quoted(state)} sums to {Text.Number(sum)}, {deviation} {side} one. Correct its probabilities, " +
-            $"or allow a rescaling with RowSums.Rescale of {deviation} or more.";
+        var advice = deviation < LargestDeviationToRescale
+            ? $"Correct its probabilities, or allow a rescaling with RowSums.Rescale of {Text.ShortAtLeast(deviation)} or more."
+            : "Correct its probabilities: they are parts of 1.";
+        return $"The row of {Text.Quoted(state)} sums to {Text.Number(sum)}, {Text.Short(deviation)} {side} one. {advice}";
     }
 
     internal static string DuplicateTransition(object from, object to) =>
@@ -63,8 +71,12 @@ internal static partial class Messages
     internal static string SelfRate(object state, double value) =>
         $"The rate {Text.Number(value)} leads from {Text.Quoted(state)} to itself. Leave it out: in continuous time staying is not a move.";
 
-    internal static string RateOutOfRange(object from, object to, double value) =>
-        $"The rate {Text.Number(value)} of {Text.Quoted(from)} to {Text.Quoted(to)} is too far from the others to be stored without loss. Use a unit of time in which the rates are closer to 1.";
+    internal static string RatesTooLarge(object from, double total) =>
+        $"The rates out of {Text.Quoted(from)} sum to {Text.Number(total)}, more than can be computed with. Use a shorter unit of time, in which the rates are smaller.";
+
+    internal static string RateTooSmall(object from, object to, double value, double largest) =>
+        $"The rate {Text.Number(value)} of {Text.Quoted(from)} to {Text.Quoted(to)} is too small to be stored beside the largest, about {Text.Short(largest)}. " +
+        "Correct one of the two, or give the move the rate 0 if it may be left out.";
 
     internal static string UnobservedRow(object state) =>
         $"State {Text.Quoted(state)} was never seen to be followed by anything, so its probabilities are unknown. Observe longer, " +

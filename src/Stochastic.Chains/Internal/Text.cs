@@ -6,6 +6,7 @@ namespace Stochastic.Chains.Internal;
 internal static class Text
 {
     private const int LabelsShown = 8;
+    private const double RoundingInAdvice = 1e-12;
 
     /// <summary>A state's own text, in the invariant culture.</summary>
     internal static string Label(object? state) => state switch
@@ -31,6 +32,14 @@ internal static class Text
 
     /// <summary>A few significant digits, for deviations and sizes in messages.</summary>
     internal static string Short(double value) => value.ToString("G4", CultureInfo.InvariantCulture);
+
+    /// <summary>A few significant digits that are not below the value, but for rounding far below them: advice that is enough when followed.</summary>
+    internal static string ShortAtLeast(double value)
+    {
+        var text = Short(value);
+        var isEnough = double.Parse(text, CultureInfo.InvariantCulture) >= value - RoundingInAdvice;
+        return isEnough ? text : Short(value * (1 + 1e-3));
+    }
 
     /// <summary>A whole number with thousands separated by commas.</summary>
     internal static string Count(long value) => value.ToString("N0", CultureInfo.InvariantCulture);

@@ -10,7 +10,8 @@ internal struct CompensatedSum
     private double _sum;
     private double _error;
 
-    internal readonly double Value => _sum + _error;
+    /// <summary>The sum so far; infinite or NaN only where the plain sum is, for then there is no rounding error to add.</summary>
+    internal readonly double Value => double.IsFinite(_error) ? _sum + _error : _sum;
 
     internal static double Of(ReadOnlySpan<double> terms)
     {

@@ -36,7 +36,9 @@ public static partial class Chain
         ArgumentNullException.ThrowIfNull(rows);
         ArgumentNullException.ThrowIfNull(options);
         var assembler = new ChainAssembler<TState>(options);
-        rows(new ChainRows<TState>(assembler));
+        var given = new ChainRows<TState>(assembler);
+        rows(given);
+        given.Close();
         return assembler.Assemble() ?? throw assembler.Faults.ToException();
     }
 

@@ -11,6 +11,7 @@ internal sealed class ChainAssembler<TState>
     private readonly bool _statesAreGiven;
     private readonly RowSums _rowSums;
     private readonly TripletList _moves = new();
+    private readonly Dictionary<int, double> _refused = [];
     private long _read;
 
     /// <summary>Starts with no states: they are added as they are seen.</summary>
@@ -44,15 +45,18 @@ internal sealed class ChainAssembler<TState>
         var number = _read++;
         if (from is null || to is null)
         {
-            Faults.Add(ChainFaultKind.NullState, [from, to], value, Messages.NullStateInMove(number));
-            return;
+            Faults.Add(ChainFaultKind.NullState, [from, to], number, Messages.NullStateInMove(number));
         }
 
-        var row = Locate(from, from, to);
-        var column = Locate(to, from, to);
+        var row = from is null ? -1 : Locate(from, from, to);
+        var column = to is null ? -1 : Locate(to, from, to);
         if (row >= 0 && column >= 0 && value != 0)
         {
             _moves.Add(row, column, value);
+        }
+        else if (row >= 0 && column < 0)
+        {
+            _refused[row] = _refused.GetValueOrDefault(row) + value;
         }
     }
 
@@ -88,17 +92,13 @@ internal sealed class ChainAssembler<TState>
     private Chain<TState>? FromRows(StateSpace<TState> states, CompressedRows rows, double? uniformizationRate)
     {
         var validator = new RowValidator<TState>(states, _rowSums, Faults);
-        for (var row = 0; row < states.Count; row++)
-        {
-            validator.Check(row, rows.RowColumns(row), rows.RowValues(row));
-        }
-
+        validator.CheckAll(rows, _refused);
         return Faults.HasFaults
             ? null
             : new Chain<TState>(states, TransitionMatrix.FromCompressedRows(rows), validator.Rescaled, uniformizationRate);
     }
 
-    private int Locate(TState state, TState from, TState to)
+    private int Locate(TState state, object? from, object? to)
     {
         if (!_statesAreGiven)
         {

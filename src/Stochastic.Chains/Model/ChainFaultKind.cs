@@ -39,7 +39,7 @@ public enum ChainFaultKind
     /// <summary>A rate leads from a state to itself, which has no meaning in continuous time.</summary>
     SelfRate,
 
-    /// <summary>A rate is too large or too small, beside the largest, to be stored exactly.</summary>
+    /// <summary>The rates out of a state sum to more than a double can hold, or a rate is too small to be stored beside the largest.</summary>
     RateOutOfRange,
 
     /// <summary>A state was never left in the counts from which the chain is to be estimated.</summary>

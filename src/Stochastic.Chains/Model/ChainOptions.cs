@@ -15,8 +15,18 @@ public sealed record ChainOptions<TState>
     where TState : notnull
 {
     /// <summary>Gets the comparer that decides whether two labels mean the same state. Default: the type's own equality.</summary>
-    public IEqualityComparer<TState> Comparer { get; init; } = EqualityComparer<TState>.Default;
+    /// <exception cref="ArgumentNullException">Set to null.</exception>
+    public IEqualityComparer<TState> Comparer
+    {
+        get;
+        init => field = value ?? throw new ArgumentNullException(nameof(value));
+    } = EqualityComparer<TState>.Default;
 
     /// <summary>Gets what is done with a row that does not sum to one. Default: <see cref="RowSums.MustBeOne"/>.</summary>
-    public RowSums RowSums { get; init; } = RowSums.MustBeOne;
+    /// <exception cref="ArgumentNullException">Set to null.</exception>
+    public RowSums RowSums
+    {
+        get;
+        init => field = value ?? throw new ArgumentNullException(nameof(value));
+    } = RowSums.MustBeOne;
 }

@@ -16,6 +16,8 @@ public sealed class ChainRows<TState>
 {
     private readonly ChainAssembler<TState> _assembler;
     private readonly HashSet<int> _given = [];
+    private int _calls;
+    private bool _isClosed;
 
     internal ChainRows(ChainAssembler<TState> assembler) => _assembler = assembler;
 
@@ -23,18 +25,34 @@ public sealed class ChainRows<TState>
     /// <param name="from">The state the moves start in; each state has one row.</param>
     /// <param name="moves">Where the next step leads, with its probability; to <paramref name="from"/> itself for a stay.</param>
     /// <returns>These rows, to go on with.</returns>
+    /// <exception cref="InvalidOperationException">The chain has been built already.</exception>
     public ChainRows<TState> Row(TState from, params ReadOnlySpan<(TState To, double Probability)> moves)
     {
-        if (from is not null && !_given.Add(_assembler.FindOrAdd(from)))
+        if (_isClosed)
         {
-            _assembler.Faults.Add(ChainFaultKind.DuplicateState, [from], _given.Count, Messages.DuplicateRow(from));
+            throw new InvalidOperationException(Messages.RowAfterBuild);
+        }
+
+        var position = _calls++;
+        if (from is null)
+        {
+            _assembler.Faults.Add(ChainFaultKind.NullState, [from], position, Messages.NullRow(position));
+            return this;
+        }
+
+        if (!_given.Add(_assembler.FindOrAdd(from)))
+        {
+            _assembler.Faults.Add(ChainFaultKind.DuplicateState, [from], position, Messages.DuplicateRow(from));
         }
 
         foreach (var (to, probability) in moves)
         {
-            _assembler.Add(from!, to, probability);
+            _assembler.Add(from, to, probability);
         }
 
         return this;
     }
+
+    /// <summary>Takes no more rows: the states now belong to an immutable chain.</summary>
+    internal void Close() => _isClosed = true;
 }

@@ -18,7 +18,7 @@ public static class Distribution
     public static Distribution<TState> Over<TState>(StateSpace<TState> states, params IEnumerable<(TState State, double Probability)> probabilities)
         where TState : notnull
     {
-        var values = Collect(states, probabilities, (state, value) => value is >= 0 and <= 1 ? null : Messages.ProbabilityNotValid(state, value));
+        var values = Collect(states, probabilities, (state, value) => value is >= 0 and <= 1 ? null : Messages.ProbabilityNotValid(state, value), nameof(probabilities));
         var sum = CompensatedSum.Of(values);
         return Math.Abs(sum - 1) <= SumTolerance
             ? new Distribution<TState>(states, values)
@@ -35,7 +35,7 @@ public static class Distribution
     public static Distribution<TState> FromWeights<TState>(StateSpace<TState> states, params IEnumerable<(TState State, double Weight)> weights)
         where TState : notnull
     {
-        var values = Collect(states, weights, (state, value) => double.IsFinite(value) && value >= 0 ? null : Messages.WeightNotValid(state, value));
+        var values = Collect(states, weights, (state, value) => double.IsFinite(value) && value >= 0 ? null : Messages.WeightNotValid(state, value), nameof(weights));
         var largest = values.Max();
         if (largest == 0)
         {
@@ -86,11 +86,12 @@ public static class Distribution
         return new Distribution<TState>(states, values);
     }
 
-    private static double[] Collect<TState>(StateSpace<TState> states, IEnumerable<(TState State, double Value)> shares, Func<TState, double, string?> fault)
+    private static double[] Collect<TState>(
+        StateSpace<TState> states, IEnumerable<(TState State, double Value)> shares, Func<TState, double, string?> fault, string parameter)
         where TState : notnull
     {
         ArgumentNullException.ThrowIfNull(states);
-        ArgumentNullException.ThrowIfNull(shares);
+        ArgumentNullException.ThrowIfNull(shares, parameter);
         var values = new double[states.Count];
         var given = new bool[states.Count];
         foreach (var (state, value) in shares)
@@ -98,16 +99,16 @@ public static class Distribution
             var position = states.Require(state);
             if (fault(state, value) is { } message)
             {
-                throw new ArgumentException(message, nameof(shares));
+                throw new ArgumentException(message, parameter);
             }
 
             if (given[position])
             {
-                throw new ArgumentException(Messages.RepeatedState(state), nameof(shares));
+                throw new ArgumentException(Messages.RepeatedState(state), parameter);
             }
 
             given[position] = true;
-            values[position] = value;
+            values[position] = value == 0 ? 0 : value; // a share of −0 is 0
         }
 
         return values;

@@ -1,5 +1,7 @@
+using System.Collections.ObjectModel;
 using MathNet.Numerics.LinearAlgebra;
 using Stochastic.Chains.Internal;
+using Stochastic.Chains.Kernels;
 
 namespace Stochastic.Chains;
 
@@ -9,12 +11,13 @@ internal static class MatrixReader<TState>
 {
     internal static Chain<TState>? Read(IReadOnlyList<TState> states, double[,] matrix, ChainOptions<TState> options, FaultCollector faults)
     {
-        if (ReadStates(states, matrix.GetLength(0), matrix.GetLength(1), options, faults) is not { } space)
+        var builder = StateSpaceBuilder<TState>.FromList(states, options.Comparer, faults);
+        if (!HasShape(states, matrix.GetLength(0), matrix.GetLength(1), faults))
         {
             return null;
         }
 
-        var size = space.Count;
+        var size = states.Count;
         var transitions = 0L;
         foreach (var value in matrix)
         {
@@ -22,7 +25,7 @@ internal static class MatrixReader<TState>
         }
 
         var writer = new MatrixWriter(size, transitions);
-        var validator = new RowValidator<TState>(space, options.RowSums, faults);
+        var validator = new RowValidator<TState>(states, options.RowSums, faults);
         var columns = new int[size];
         var values = new double[size];
         for (var row = 0; row < size; row++)
@@ -37,11 +40,13 @@ internal static class MatrixReader<TState>
                 }
             }
 
-            validator.Check(row, columns.AsSpan(0, count), values.AsSpan(0, count));
+            validator.Check(row, columns.AsSpan(0, count), values.AsSpan(0, count), refused: 0);
             writer.Write(row, columns.AsSpan(0, count), values.AsSpan(0, count));
         }
 
-        return faults.HasFaults ? null : new Chain<TState>(space, writer.ToMatrix(), validator.Rescaled, uniformizationRate: null);
+        return faults.HasFaults
+            ? null
+            : new Chain<TState>(builder.ToStateSpace(), writer.ToMatrix(), validator.Rescaled, uniformizationRate: null);
     }
 
     internal static Chain<TState>? Read(IReadOnlyList<TState> states, Matrix<double> matrix, ChainOptions<TState> options, FaultCollector faults)
@@ -51,25 +56,32 @@ internal static class MatrixReader<TState>
             return Read(states, matrix.ToArray(), options, faults);
         }
 
-        if (ReadStates(states, matrix.RowCount, matrix.ColumnCount, options, faults) is not { } space)
+        var builder = StateSpaceBuilder<TState>.FromList(states, options.Comparer, faults);
+        if (!HasShape(states, matrix.RowCount, matrix.ColumnCount, faults))
         {
             return null;
         }
 
-        var assembler = ChainAssembler<TState>.ForStates(space, options);
+        var entries = new TripletList();
         foreach (var (row, column, value) in matrix.EnumerateIndexed(Zeros.AllowSkip))
         {
-            assembler.Add(space[row], space[column], value);
+            if (value != 0)
+            {
+                entries.Add(row, column, value);
+            }
         }
 
-        var chain = assembler.Assemble();
-        faults.AddAll(assembler.Faults);
-        return chain;
+        var rows = entries.ToCompressedRows(states.Count);
+        var validator = new RowValidator<TState>(states, options.RowSums, faults);
+        validator.CheckAll(rows, ReadOnlyDictionary<int, double>.Empty);
+        return faults.HasFaults
+            ? null
+            : new Chain<TState>(builder.ToStateSpace(), TransitionMatrix.FromCompressedRows(rows), validator.Rescaled, uniformizationRate: null);
     }
 
-    private static StateSpace<TState>? ReadStates(IReadOnlyList<TState> states, int rows, int columns, ChainOptions<TState> options, FaultCollector faults)
+    /// <summary>Whether the rows can be told apart by state; where they cannot, nothing is said about them.</summary>
+    private static bool HasShape(IReadOnlyList<TState> states, int rows, int columns, FaultCollector faults)
     {
-        var builder = StateSpaceBuilder<TState>.FromList(states, options.Comparer, faults);
         if (rows != columns)
         {
             faults.Add(ChainFaultKind.WrongShape, [], columns, Messages.NotSquare(rows, columns));
@@ -80,6 +92,6 @@ internal static class MatrixReader<TState>
             faults.Add(ChainFaultKind.WrongShape, [], states.Count, Messages.WrongStateCount(states.Count, rows));
         }
 
-        return faults.HasFaults ? null : builder.ToStateSpace();
+        return rows == columns && states.Count == rows && rows > 0;
     }
 }

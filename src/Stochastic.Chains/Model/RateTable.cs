@@ -8,7 +8,7 @@ internal static class RateTable
     private const int BytesPerEntry = 16;
 
     /// <summary>The rates among some states.</summary>
-    internal static ScaledDouble[] Square(TransitionMatrix matrix, int[] members, SolveOptions options)
+    internal static ScaledDouble[] Square(TransitionMatrix matrix, ReadOnlySpan<int> members, SolveOptions options)
     {
         var columnOf = new int[matrix.Size];
         columnOf.AsSpan().Fill(-1);
@@ -21,14 +21,10 @@ internal static class RateTable
     }
 
     /// <summary>The rates of some states into numbered columns; −1 leaves a target out, several targets may share a column.</summary>
-    internal static ScaledDouble[] Bordered(TransitionMatrix matrix, int[] rows, int[] columnOf, int columns, SolveOptions options)
+    internal static ScaledDouble[] Bordered(TransitionMatrix matrix, ReadOnlySpan<int> rows, int[] columnOf, int columns, SolveOptions options)
     {
         var entries = (long)rows.Length * columns;
-        if (entries * BytesPerEntry > options.MemoryLimit || entries > Array.MaxLength)
-        {
-            throw new MemoryLimitException(rows.Length, entries * BytesPerEntry, options.MemoryLimit);
-        }
-
+        options.RequireMemory(rows.Length, entries * BytesPerEntry);
         var table = new ScaledDouble[entries];
         matrix.AddRates(rows, columnOf, (row, column, rate) => table[(row * columns) + column] += rate);
         return table;

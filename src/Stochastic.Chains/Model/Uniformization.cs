@@ -11,6 +11,9 @@ namespace Stochastic.Chains;
 internal static class Uniformization<TState>
     where TState : notnull
 {
+    /// <summary>The largest total above which no power of two is left: just below 2¹⁰²³.</summary>
+    private const double LargestTotal = double.MaxValue / 2;
+
     internal static (CompressedRows Rows, double Rate)? Apply(StateSpace<TState> states, CompressedRows rates, FaultCollector faults)
     {
         var totals = new double[states.Count];
@@ -61,7 +64,13 @@ internal static class Uniformization<TState>
             }
         }
 
-        return CompensatedSum.Of(values);
+        var total = CompensatedSum.Of(values);
+        if (total > LargestTotal && !values.Contains(double.PositiveInfinity))
+        {
+            faults.Add(ChainFaultKind.RateOutOfRange, [from], total, Messages.RatesTooLarge(from, total));
+        }
+
+        return total;
     }
 
     private static void AddRow(StateSpace<TState> states, int row, CompressedRows rates, double total, double rate, TripletList moves, FaultCollector faults)
@@ -71,10 +80,10 @@ internal static class Uniformization<TState>
         for (var k = 0; k < columns.Length; k++)
         {
             var probability = values[k] / rate;
-            if (!double.IsNormal(probability) || !double.IsFinite(rate))
+            if (!double.IsNormal(probability))
             {
                 var to = states[columns[k]];
-                faults.Add(ChainFaultKind.RateOutOfRange, [states[row], to], values[k], Messages.RateOutOfRange(states[row], to, values[k]));
+                faults.Add(ChainFaultKind.RateOutOfRange, [states[row], to], values[k], Messages.RateTooSmall(states[row], to, values[k], rate));
             }
 
             moves.Add(row, columns[k], probability);

@@ -9,43 +9,24 @@ internal static class FlowResidual
     /// The largest |inflow − outflow| / outflow over the states, from the off-diagonal probabilities. Each state's flows are scaled by
     /// its outflow before they are summed, so that flows beyond the range of a double count too.
     /// </summary>
-    internal static double Of(TransitionMatrix matrix, int[] members, double[] values)
+    internal static double Of(StationaryProblem problem, ReadOnlySpan<double> shares)
     {
-        var scales = new long[values.Length];
-        var outflows = new double[values.Length];
-        foreach (var state in members)
+        var largest = 0.0;
+        for (var to = 0; to < shares.Length; to++)
         {
-            var outflow = (ScaledDouble)values[state] * OffDiagonalSum(matrix, state);
-            scales[state] = -outflow.Exponent;
-            outflows[state] = outflow.ToDouble(scales[state]);
-        }
-
-        var inflows = new CompensatedSum[values.Length];
-        foreach (var from in members)
-        {
-            foreach (var (to, rate) in matrix.Row(from))
+            var outflow = (ScaledDouble)shares[to] * problem.Outflows[to];
+            var inflow = default(CompensatedSum);
+            var sources = problem.Inflows.RowColumns(to);
+            var rates = problem.Inflows.RowValues(to);
+            for (var k = 0; k < sources.Length; k++)
             {
-                if (to != from)
-                {
-                    inflows[to].Add(((ScaledDouble)values[from] * rate).ToDouble(scales[to]));
-                }
+                inflow.Add(((ScaledDouble)shares[sources[k]] * rates[k]).ToDouble(-outflow.Exponent));
             }
+
+            var scaledOutflow = outflow.ToDouble(-outflow.Exponent);
+            largest = Math.Max(largest, Math.Abs(inflow.Value - scaledOutflow) / scaledOutflow);
         }
 
-        return members.Max(state => Math.Abs(inflows[state].Value - outflows[state]) / outflows[state]);
-    }
-
-    private static double OffDiagonalSum(TransitionMatrix matrix, int row)
-    {
-        var sum = default(CompensatedSum);
-        foreach (var (to, rate) in matrix.Row(row))
-        {
-            if (to != row)
-            {
-                sum.Add(rate);
-            }
-        }
-
-        return sum.Value;
+        return largest;
     }
 }

@@ -3,83 +3,57 @@ using Stochastic.Chains.Kernels;
 
 namespace Stochastic.Chains.Stationary;
 
-/// <summary>The direct solve of one recurrent class by state reduction.</summary>
+/// <summary>Solves one recurrent class by a method, checks what comes back, and certifies it.</summary>
 internal static class StationarySolve<TState>
     where TState : notnull
 {
-    private const string Method = "state reduction";
-
-    internal static StationaryDistribution<TState> OfClass(Chain<TState> chain, CommunicatingClass<TState> group, SolveOptions options)
+    /// <summary>The result, and the advice of the method when it has not converged.</summary>
+    internal static (StationaryDistribution<TState> Result, string? Advice) Run(
+        Chain<TState> chain, CommunicatingClass<TState> group, IStationaryMethod? given, SolveOptions options)
     {
         var members = group.Members;
         var values = new double[chain.StateCount];
         if (members.Length == 1)
         {
             values[members[0]] = 1;
-            return new StationaryDistribution<TState>(chain.States, values, StructureCertificate);
+            return (new StationaryDistribution<TState>(chain.States, values, StationaryCertificate.OfSingleState), null);
         }
 
-        var shares = Solve(chain, members, options);
+        var problem = new StationaryProblem(chain.Matrix, members, group.Period, options);
+        var (method, choice) = given is null ? StationaryChoice.For(problem) : (given, "Asked for.");
+        var vector = method.Solve(problem);
+        var shares = Normalize(chain, members, method.Name, vector);
         for (var k = 0; k < members.Length; k++)
         {
             values[members[k]] = shares[k];
         }
 
-        return new StationaryDistribution<TState>(chain.States, values, Certify(chain, members, values, options));
+        var certificate = StationaryCertificate.Of(problem, method, vector, choice, shares);
+        return (new StationaryDistribution<TState>(chain.States, values, certificate), vector.HasConverged ? null : vector.Advice);
     }
 
-    private static Certificate StructureCertificate { get; } = new()
+    /// <summary>Divides the vector by its sum, refusing what cannot be a stationary vector: nothing is clipped.</summary>
+    private static double[] Normalize(Chain<TState> chain, int[] members, string method, StationaryVector vector)
     {
-        Method = Method,
-        Reason = "The only recurrent state holds everything in the long run.",
-        Residual = 0,
-        RelativeErrorBound = 0,
-        AbsoluteErrorBound = 0,
-        Basis = ErrorBasis.Structure,
-        IsProof = true,
-    };
-
-    private static double[] Solve(Chain<TState> chain, int[] members, SolveOptions options)
-    {
-        var table = RateTable.Square(chain.Matrix, members, options);
-        var reduction = new GeneralReduction<ScaledDouble>(table, members.Length, members.Length, members.Length - 1);
-        reduction.Eliminate(options.Report("elimination"), options.CancellationToken);
-        var weights = new ScaledDouble[members.Length];
-        weights[^1] = ScaledDouble.One;
-        reduction.ExtendLeft(weights);
-        var total = default(ScaledDouble);
-        foreach (var weight in weights)
+        var raw = vector.Values.Span;
+        if (raw.Length != members.Length)
         {
-            total += weight;
+            throw new ArgumentException(Messages.WrongLength(method, raw.Length, members.Length), nameof(vector));
         }
 
-        var shares = new double[members.Length];
+        var sum = CompensatedSum.Of(raw);
+        var shares = new double[raw.Length];
         for (var k = 0; k < shares.Length; k++)
         {
-            shares[k] = (weights[k] / total).ToDouble();
-            if (!double.IsNormal(shares[k]))
+            shares[k] = raw[k] / sum;
+            if (!double.IsNormal(shares[k]) || shares[k] < 0 || !double.IsFinite(sum))
             {
                 var state = chain.States[members[k]];
-                throw new NumericalRangeException(Messages.ShareOutOfRange(state, (weights[k] / total).Exponent), Text.Label(state));
+                var message = raw[k] >= 0 ? Messages.ShareTooSmall(state) : Messages.NotPositive(method, state, raw[k]);
+                throw new NumericalRangeException(message, Text.Label(state));
             }
         }
 
         return shares;
-    }
-
-    private static Certificate Certify(Chain<TState> chain, int[] members, double[] values, SolveOptions options)
-    {
-        var isBounded = options.CertificateLevel == CertificateLevel.Proof;
-        var bound = isBounded ? SubtractionFreeBound.OfElimination(members.Length - 1, members.Length, merges: 0) : double.PositiveInfinity;
-        return new Certificate
-        {
-            Method = Method,
-            Reason = "Direct and free of subtraction: every share keeps its digits.",
-            Residual = options.CertificateLevel >= CertificateLevel.Residual ? FlowResidual.Of(chain.Matrix, members, values) : double.PositiveInfinity,
-            RelativeErrorBound = bound,
-            AbsoluteErrorBound = bound,
-            Basis = double.IsFinite(bound) ? ErrorBasis.SubtractionFree : ErrorBasis.None,
-            IsProof = double.IsFinite(bound),
-        };
     }
 }
