@@ -98,7 +98,7 @@ internal sealed class ChainAssembler<TState>
             : new Chain<TState>(states, TransitionMatrix.FromCompressedRows(rows), validator.Rescaled, uniformizationRate);
     }
 
-    private int Locate(TState state, object? from, object? to)
+    private int Locate(TState state, TState? from, TState? to)
     {
         if (!_statesAreGiven)
         {

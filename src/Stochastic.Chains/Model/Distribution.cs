@@ -41,7 +41,7 @@ public class Distribution<TState> : IReadOnlyDictionary<TState, double>
 
     IEnumerable<TState> IReadOnlyDictionary<TState, double>.Keys => States;
 
-    IEnumerable<double> IReadOnlyDictionary<TState, double>.Values => _values;
+    IEnumerable<double> IReadOnlyDictionary<TState, double>.Values => _values.AsReadOnly();
 
     /// <summary>Gets the probability of a state.</summary>
     /// <param name="state">One of the states.</param>

@@ -12,7 +12,7 @@ internal sealed class RowValidator<TState>(IReadOnlyList<TState> states, RowSums
 {
     private readonly List<RescaledRow<TState>> _rescaled = [];
 
-    internal IReadOnlyList<RescaledRow<TState>> Rescaled => _rescaled;
+    internal IReadOnlyList<RescaledRow<TState>> Rescaled => _rescaled.AsReadOnly();
 
     /// <summary>Checks every row in turn.</summary>
     /// <param name="rows">The nonzero entries; rescaled in place where that is allowed.</param>

@@ -58,13 +58,17 @@ internal sealed class TransitionMatrix
     internal static TransitionMatrix FromDense(double[] table, int size, int transitionCount) =>
         new(size, transitionCount, table, null, null, null);
 
+    /// <summary>Takes ownership of compressed rows with ascending columns, whatever their density.</summary>
+    internal static TransitionMatrix FromSparse(CompressedRows rows) =>
+        new(rows.RowCount, rows.EntryCount, null, rows.Starts, rows.Columns, rows.Values);
+
     /// <summary>Takes ownership of compressed rows with ascending columns, densifying where the density rule says so.</summary>
     internal static TransitionMatrix FromCompressedRows(CompressedRows rows)
     {
         var size = rows.RowCount;
         if (ChooseStorage(size, rows.EntryCount) == MatrixStorage.CompressedSparseRows)
         {
-            return new TransitionMatrix(size, rows.EntryCount, null, rows.Starts, rows.Columns, rows.Values);
+            return FromSparse(rows);
         }
 
         var table = new double[size * size];

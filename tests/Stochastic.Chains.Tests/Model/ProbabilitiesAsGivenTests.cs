@@ -80,20 +80,21 @@ public class ProbabilitiesAsGivenTests
         chain[0, 1].Should().Be(0.3);
     }
 
-    [Theory]
-    [InlineData(0.0)]
-    [InlineData(-0.0)]
-    public void A_zero_of_either_sign_is_no_transition(double zero)
+    [Fact]
+    public void A_zero_of_either_sign_is_no_transition()
     {
-        var fromMatrix = Chain.FromMatrix(new[,] { { 1, zero }, { zero, 1 } });
-        var fromMoves = Chain.FromTransitions([new(0, 0, 1), new(0, 1, zero), new(1, 1, 1), new Transition<int>(1, 0, zero)]);
-
-        foreach (var chain in new[] { fromMatrix, fromMoves })
+        foreach (var zero in new[] { 0.0, -0.0 })
         {
-            chain.TransitionCount.Should().Be(2);
-            chain.TransitionsFrom(0).Should().ContainSingle();
-            double.IsNegative(chain[0, 1]).Should().BeFalse();
-            double.IsNegative(chain.ToArray()[1, 0]).Should().BeFalse();
+            var fromMatrix = Chain.FromMatrix(new[,] { { 1, zero }, { zero, 1 } });
+            var fromMoves = Chain.FromTransitions([new(0, 0, 1), new(0, 1, zero), new(1, 1, 1), new Transition<int>(1, 0, zero)]);
+
+            foreach (var chain in new[] { fromMatrix, fromMoves })
+            {
+                chain.TransitionCount.Should().Be(2);
+                chain.TransitionsFrom(0).Should().ContainSingle();
+                double.IsNegative(chain[0, 1]).Should().BeFalse();
+                double.IsNegative(chain.ToArray()[1, 0]).Should().BeFalse();
+            }
         }
     }
 

@@ -95,6 +95,7 @@ public class RowSumTests
         };
 
         chain.RescaledRows.Should().Equal(new RescaledRow<string>("a", 0.75));
+        (chain.RescaledRows is IList<RescaledRow<string>> { IsReadOnly: false }).Should().BeFalse("a caller could change the chain through it");
         chain["a", "b"].Should().Be(1);
     }
 
