@@ -31,6 +31,24 @@ internal static class Certificates
         #endregion
     }
 
+    public static void Require()
+    {
+        var pump = InventedChains.Pump;
+        #region require
+        double failed = pump.Stationary().Require(relativeError: 1e-12)[Stage.Failed];
+        Console.WriteLine($"{failed:P4}");
+
+        try
+        {
+            _ = pump.Stationary(new LinearSystemMethod()).Require(relativeError: 1e-16);
+        }
+        catch (AccuracyException unproved)
+        {
+            Console.WriteLine($"Not good enough: the {unproved.Certificate.Method}");
+        }
+        #endregion
+    }
+
     public static void Structure()
     {
         var pool = InventedChains.Pool;

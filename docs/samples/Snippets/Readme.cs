@@ -15,11 +15,11 @@ internal static class Readme
             .Row("lost", ("lost", 1.00)));
 
         double cleanSoon = pool.StartingIn("dirty").After(8)["clean"];
-        HittingTimes<string> untilLost = pool.TimeTo("lost");
+        // Proved to be right to twelve digits, or an exception:
+        HittingTimes<string> untilLost = pool.TimeTo("lost").Require(relativeError: 1e-12);
 
         Console.WriteLine($"Clean in eight weeks: {cleanSoon:P1}");
         Console.WriteLine($"Weeks until lost: {untilLost.Mean("clean"):F1}");
-        Console.WriteLine($"Proved to twelve digits: {untilLost.Certificate is { IsProof: true, RelativeErrorBound: <= 1e-12 }}");
         #endregion
     }
 }

@@ -38,6 +38,44 @@ internal static class WhereItSettles
         #endregion
     }
 
+    public static void Methods()
+    {
+        #region methods
+        // Two halves that hardly ever exchange anything; invented figures.
+        Chain<string> halves = Chain.FromTransitions<string>(
+        [
+            new("a1", "a1", 0.7), new("a1", "a2", 0.3), new("a1", "b1", 1e-16),
+            new("a2", "a1", 0.5), new("a2", "a2", 0.5),
+            new("b1", "b1", 0.8), new("b1", "b2", 0.2), new("b1", "a1", 3e-16),
+            new("b2", "b1", 0.7), new("b2", "b2", 0.3),
+        ]);
+        double exact = 1 / (1 + (0.3 / 0.5) + ((1 + (0.2 / 0.7)) / 3));   // by balancing each pair of states
+
+        foreach (IStationaryMethod method in new IStationaryMethod[] { new EliminationMethod(), new AggregationMethod(), new LinearSystemMethod() })
+        {
+            StationaryDistribution<string> shares = halves.Stationary(method);
+            double error = Math.Abs((shares["a1"] / exact) - 1);
+            string verdict = error < 1e-12 ? "right to twelve digits" : $"wrong by {error:P0}";
+            Console.WriteLine($"{method.Name}: {verdict}, balanced to fourteen: {shares.Certificate.Residual < 1e-14}, proved: {shares.Certificate.IsProof}");
+        }
+        #endregion
+    }
+
+    public static void NotConverged()
+    {
+        var pump = InventedChains.Pump;
+        #region not-converged
+        try
+        {
+            _ = pump.Stationary(new PowerMethod { MaxIterations = 5 });
+        }
+        catch (ConvergenceException early)
+        {
+            Console.WriteLine($"{early.Iterations} steps were not enough. {early.Advice}");
+        }
+        #endregion
+    }
+
     public static void SeveralEnds()
     {
         var pool = InventedChains.Pool;
