@@ -41,7 +41,7 @@ internal sealed class TripletList
         {
             var block = _blocks[b];
             var length = LengthOf(b);
-            _blocks[b] = Block.Released;
+            _blocks[b] = default; // free to be collected once its entries have moved
             for (var k = 0; k < length; k++)
             {
                 var position = next[block.Rows[k]]++;
@@ -99,8 +99,5 @@ internal sealed class TripletList
 
     private int LengthOf(int block) => block == _blocks.Count - 1 ? _inLast : BlockLength;
 
-    private readonly record struct Block(int[] Rows, int[] Columns, double[] Values)
-    {
-        internal static Block Released { get; } = new([], [], []);
-    }
+    private readonly record struct Block(int[] Rows, int[] Columns, double[] Values);
 }
