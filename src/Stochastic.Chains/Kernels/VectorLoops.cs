@@ -79,6 +79,15 @@ internal static class VectorLoops
         }
     }
 
+    /// <summary>Multiplies each number of target by its own factor.</summary>
+    internal static void Multiply(ReadOnlySpan<double> factors, Span<double> target)
+    {
+        for (var index = 0; index < target.Length; index++)
+        {
+            target[index] *= factors[index];
+        }
+    }
+
     /// <summary>Lowers each number of target to the one in bounds, where that is less.</summary>
     internal static void LowerTo(ReadOnlySpan<double> bounds, Span<double> target)
     {

@@ -19,13 +19,6 @@ internal sealed class FaultCollector
         }
     }
 
-    /// <summary>Takes over what another collector found.</summary>
-    internal void AddAll(FaultCollector other)
-    {
-        _faults.AddRange(other._faults.Take(InvalidChainException.MaxListedFaults - _faults.Count));
-        _count += other._count;
-    }
-
     internal void ThrowIfAny()
     {
         if (HasFaults)

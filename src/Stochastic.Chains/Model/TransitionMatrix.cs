@@ -102,21 +102,16 @@ internal sealed class TransitionMatrix
         ? new Components(new int[Size], 1)
         : OnGraph<Components, StronglyConnectedComponents>(default);
 
-    /// <summary>
-    /// Adds the off-diagonal rates of some rows into a table, row by row: a move to state j goes to column columnOf[j]; −1 leaves it out.
-    /// </summary>
-    internal void AddRates(ReadOnlySpan<int> rows, ReadOnlySpan<int> columnOf, Action<int, int, double> add)
+    /// <summary>Copies a whole row, zeros and diagonal included, where the storage is dense.</summary>
+    internal bool TryCopyDenseRow(int row, Span<double> target)
     {
-        for (var r = 0; r < rows.Length; r++)
+        if (_dense is null)
         {
-            foreach (var (to, rate) in Row(rows[r]))
-            {
-                if (to != rows[r] && columnOf[to] >= 0)
-                {
-                    add(r, columnOf[to], rate);
-                }
-            }
+            return false;
         }
+
+        _dense.AsSpan(row * Size, Size).CopyTo(target);
+        return true;
     }
 
     /// <summary>Adds a multiple of a row, the diagonal included, to a distribution.</summary>

@@ -25,7 +25,7 @@ internal static class AbsorptionSolve<TState>
         var transient = structure.TransientPositions;
         if (transient.Length > 0)
         {
-            var system = new ExitSystem<TState>(chain, transient, ends.Count, state => endOf[state], options);
+            using var system = new ExitSystem<TState>(chain, transient, ends.Count, endOf, options);
             Fill(system, chain, transient, ends.Count, probabilities, meanSteps, evidence);
         }
 

@@ -7,54 +7,53 @@ namespace Stochastic.Chains.Passage;
 /// The equations of the first step over some states that are all left in the end: outflow · x = given + flow-weighted x of the next
 /// states. Reduced once with the exits as explicit columns, then solved for any number of right-hand sides.
 /// </summary>
-internal sealed class ExitSystem<TState>
+internal sealed class ExitSystem<TState> : IDisposable
     where TState : notnull
 {
+    private const int WideBytes = 16;
+
     private readonly Chain<TState> _chain;
     private readonly int[] _members;
-    private readonly int[] _columnOf;
+    private readonly int[] _exitOf;
     private readonly int _exits;
-    private readonly GeneralReduction<ScaledDouble> _reduction;
-    private readonly ScaledDouble[] _exitRates;
+    private readonly SolveOptions _options;
+    private readonly RateTable _rates;
+    private readonly WorkTable _table;
+    private readonly double[] _sums;
+    private readonly bool _staysInRange;
+    private readonly int _merges;
+    private GeneralReduction<ScaledDouble>? _wide;
 
     /// <summary>Reduces the system over the members; a move to another state counts as exit number exitOf, or not at all when that is −1.</summary>
-    internal ExitSystem(Chain<TState> chain, int[] members, int exits, Func<int, int> exitOf, SolveOptions options)
+    internal ExitSystem(Chain<TState> chain, int[] members, int exits, int[] exitOf, SolveOptions options)
     {
         _chain = chain;
         _members = members;
+        _exitOf = exitOf;
         _exits = exits;
-        _columnOf = new int[chain.StateCount];
-        for (var state = 0; state < _columnOf.Length; state++)
-        {
-            var exit = exitOf(state);
-            _columnOf[state] = exit < 0 ? -1 : members.Length + exit;
-        }
-
-        for (var k = 0; k < members.Length; k++)
-        {
-            _columnOf[members[k]] = k;
-        }
-
-        var columns = members.Length + exits;
-        var table = RateTable.Bordered(chain.Matrix, members, _columnOf, columns, options);
-        _exitRates = new ScaledDouble[members.Length * exits];
-        for (var k = 0; k < members.Length; k++)
-        {
-            table.AsSpan((k * columns) + members.Length, exits).CopyTo(_exitRates.AsSpan(k * exits, exits));
-        }
-
-        _reduction = new GeneralReduction<ScaledDouble>(table, members.Length, columns, members.Length);
-        _reduction.Eliminate(options.Report("elimination"), options.CancellationToken);
-        RelativeErrorBound = SubtractionFreeBound.OfElimination(members.Length, columns, merges: chain.StateCount - members.Length);
+        _options = options;
+        _merges = chain.StateCount - members.Length - exits;
+        _rates = RateTable.WithExits(chain.Matrix, members, exits, state => exitOf[state]);
+        _sums = new double[members.Length];
+        options.RequireMemory(members.Length, sizeof(double) * (long)_rates.Rows * _rates.Columns);
+        _table = WorkTable.Rent(_rates.Rows, _rates.Columns);
+        _rates.CopyTo(_table.View);
+        _staysInRange = StateReduction.Eliminate(
+            _table.View, _rates.Rows, _rates.Columns, _rates.Rows, _sums, options.Parallelism, InstructionSet.Widest, options.CancellationToken);
     }
 
-    /// <summary>The a priori bound on the relative error of every solution.</summary>
-    internal double RelativeErrorBound { get; }
+    /// <summary>The a priori bound on the relative error of every solution so far.</summary>
+    internal double RelativeErrorBound => Math.Max(
+        _staysInRange ? ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges) : 0,
+        _wide is not null ? SubtractionFreeBound.OfElimination(_rates.Rows, _rates.Columns, _merges) : 0);
+
+    /// <summary>Gives the working memory back.</summary>
+    public void Dispose() => _table.Dispose();
 
     /// <summary>The mean number of steps until an exit, divided by the steps per unit of time.</summary>
     internal double[] MeanTimes()
     {
-        var times = Solve(_ => ScaledDouble.One);
+        var times = Solve(_ => 1);
         var means = new double[times.Length];
         for (var k = 0; k < means.Length; k++)
         {
@@ -73,7 +72,7 @@ internal sealed class ExitSystem<TState>
     /// <summary>The probability of leaving by one of the exits; rounding never takes it above one.</summary>
     internal double[] ExitProbabilities(int exit)
     {
-        var solution = Solve(k => _exitRates[(k * _exits) + exit]);
+        var solution = Solve(k => ExitRate(k, exit));
         var probabilities = new double[solution.Length];
         for (var k = 0; k < probabilities.Length; k++)
         {
@@ -101,7 +100,7 @@ internal sealed class ExitSystem<TState>
             var inflow = (ScaledDouble)given;
             foreach (var (to, rate) in _chain.Matrix.Row(member))
             {
-                if (to != member && _columnOf[to] >= 0)
+                if (to != member && _rates.ColumnOf(to) >= 0)
                 {
                     outflow += rate;
                     inflow += (ScaledDouble)rate * values[to];
@@ -115,15 +114,43 @@ internal sealed class ExitSystem<TState>
         return largest;
     }
 
-    private ScaledDouble[] Solve(Func<int, ScaledDouble> given)
+    private double ExitRate(int member, int exit)
     {
-        var values = new ScaledDouble[_members.Length];
+        var rate = 0.0;
+        foreach (var (to, probability) in _chain.Matrix.Row(_members[member]))
+        {
+            rate += IsExit(to) && _exitOf[to] == exit ? probability : 0;
+        }
+
+        return rate;
+    }
+
+    private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
+
+    private ScaledDouble[] Solve(Func<int, double> given)
+    {
+        var values = new double[_members.Length];
         for (var k = 0; k < values.Length; k++)
         {
             values[k] = given(k);
         }
 
-        _reduction.SolveRight(values);
-        return values;
+        var wide = Array.ConvertAll(values, value => (ScaledDouble)value);
+        if (_wide is null && _staysInRange && ReductionSolve.SolveRight(_table.View, _sums, _members.Length, values))
+        {
+            return Array.ConvertAll(values, value => (ScaledDouble)value);
+        }
+
+        _wide ??= ReduceWide();
+        _wide.SolveRight(wide);
+        return wide;
+    }
+
+    private GeneralReduction<ScaledDouble> ReduceWide()
+    {
+        _options.RequireMemory(_rates.Rows, WideBytes * (long)_rates.Rows * _rates.Columns);
+        var reduction = new GeneralReduction<ScaledDouble>(_rates.ToArray<ScaledDouble>(rate => rate), _rates.Rows, _rates.Columns, _rates.Rows);
+        reduction.Eliminate(_options.Report("elimination"), _options.CancellationToken);
+        return reduction;
     }
 }

@@ -20,7 +20,7 @@ internal static class HittingSolve<TState>
         int[] certain = [.. Positions(split.IsCertain)];
         if (certain.Length > 0)
         {
-            var system = new ExitSystem<TState>(chain, certain, exits: 1, state => split.IsTarget[state] ? 0 : -1, options);
+            using var system = new ExitSystem<TState>(chain, certain, exits: 1, Array.ConvertAll(split.IsTarget, isTarget => isTarget ? 0 : -1), options);
             Scatter(system.MeanTimes(), certain, means);
             evidence.Add(system.RelativeErrorBound, () => system.Residual(1 / (chain.UniformizationRate ?? 1), means));
         }
@@ -28,7 +28,7 @@ internal static class HittingSolve<TState>
         int[] possible = [.. Positions(split.IsPossible)];
         if (possible.Length > 0)
         {
-            var system = new ExitSystem<TState>(chain, possible, exits: 2, state => reaching[state] == 1 ? 0 : 1, options);
+            using var system = new ExitSystem<TState>(chain, possible, exits: 2, Array.ConvertAll(reaching, certainly => certainly == 1 ? 0 : 1), options);
             Scatter(system.ExitProbabilities(0), possible, reaching);
             evidence.Add(system.RelativeErrorBound, () => system.Residual(0, reaching));
         }

@@ -1,5 +1,3 @@
-using Stochastic.Chains.Kernels;
-
 namespace Stochastic.Chains.Stationary;
 
 /// <summary>Writes the certificate of a stationary vector: the residual of what is returned, and the best bound that can be proved.</summary>
@@ -19,7 +17,7 @@ internal static class StationaryCertificate
     internal static Certificate Of(StationaryProblem problem, IStationaryMethod method, StationaryVector vector, string choice, double[] shares)
     {
         var level = problem.Options.CertificateLevel;
-        var (basis, relative) = level == CertificateLevel.Proof ? BestBound(problem, method) : (ErrorBasis.None, double.PositiveInfinity);
+        var (basis, relative) = level == CertificateLevel.Proof ? BestBound(vector) : (ErrorBasis.None, double.PositiveInfinity);
         return new Certificate
         {
             Method = method.Name,
@@ -33,11 +31,7 @@ internal static class StationaryCertificate
         };
     }
 
-    private static (ErrorBasis Basis, double Relative) BestBound(StationaryProblem problem, IStationaryMethod method)
-    {
-        var relative = method is EliminationMethod
-            ? SubtractionFreeBound.OfElimination(problem.StateCount - 1, problem.StateCount, merges: 0)
-            : double.PositiveInfinity;
-        return double.IsFinite(relative) ? (ErrorBasis.SubtractionFree, relative) : (ErrorBasis.None, double.PositiveInfinity);
-    }
+    private static (ErrorBasis Basis, double Relative) BestBound(StationaryVector vector) => double.IsFinite(vector.AprioriBound)
+        ? (ErrorBasis.SubtractionFree, vector.AprioriBound)
+        : (ErrorBasis.None, double.PositiveInfinity);
 }

@@ -42,7 +42,8 @@ public sealed class StationaryProblem
 
     internal TransitionMatrix Matrix { get; }
 
-    internal ReadOnlySpan<int> Members => _members;
+    /// <summary>The off-diagonal rates for a direct solve: row = from, column = to.</summary>
+    internal RateTable Rates => RateTable.Among(Matrix, _members);
 
     /// <summary>The off-diagonal moves into each state: row = to, column = from. Built when first asked for.</summary>
     internal CompressedRows Inflows => _inflows.Value;

@@ -16,4 +16,7 @@ public sealed record StationaryVector(ReadOnlyMemory<double> Values)
 
     /// <summary>Gets what to try when the vector has not converged.</summary>
     public string Advice { get; init; } = "Allow more iterations, or ask EliminationMethod.";
+
+    /// <summary>A proved bound on the relative error of every ratio of two entries, where the method has one of its own.</summary>
+    internal double AprioriBound { get; init; } = double.PositiveInfinity;
 }

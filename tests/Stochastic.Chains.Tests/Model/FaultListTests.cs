@@ -105,23 +105,5 @@ public class FaultListTests
         refusal.Message.Should().Contain($"({faults:N0} faults)".Replace(".", ",", StringComparison.Ordinal));
     }
 
-    [Fact]
-    public void Faults_taken_over_from_another_collector_keep_to_the_limit_and_the_count()
-    {
-        var mine = new FaultCollector();
-        var other = new FaultCollector();
-        for (var k = 0; k < 700; k++)
-        {
-            mine.Add(ChainFaultKind.EmptyRow, [k], 0, "mine.");
-            other.Add(ChainFaultKind.RowSum, [k], 0, "other.");
-        }
-
-        mine.AddAll(other);
-
-        mine.ToList().Should().HaveCount(1001);
-        mine.ToList()[^1].Value.Should().Be(400);
-        mine.ToException().FaultCount.Should().Be(1400);
-    }
-
     private static IEnumerable<Transition<int>> Halves(int count) => Enumerable.Range(0, count).Select(k => new Transition<int>(k, k, 0.5));
 }

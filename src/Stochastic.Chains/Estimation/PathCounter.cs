@@ -1,0 +1,66 @@
+using Stochastic.Chains.Internal;
+
+namespace Stochastic.Chains.Estimation;
+
+/// <summary>Counts the moves along paths, gathering every fault on the way. No move leads from one path to the next.</summary>
+internal sealed class PathCounter<TState>(StateLookup<TState> states)
+    where TState : notnull
+{
+    private readonly MoveCounter _moves = new();
+    private readonly FaultCollector _faults = new();
+    private long _paths;
+
+    internal void AddPath(IEnumerable<TState>? path)
+    {
+        _paths++;
+        if (path is null)
+        {
+            _faults.Add(ChainFaultKind.NullState, [], _paths, Messages.NullPath(_paths));
+            return;
+        }
+
+        var previous = -1;
+        var step = 0L;
+        foreach (var state in path)
+        {
+            step++;
+            var position = Locate(state, step);
+            if (previous >= 0 && position >= 0)
+            {
+                _moves.Add(previous, position);
+            }
+
+            previous = position;
+        }
+    }
+
+    /// <exception cref="InvalidChainException">The paths had faults; all are listed.</exception>
+    internal TransitionCounts<TState> Count()
+    {
+        if (states.Count == 0 && !_faults.HasFaults)
+        {
+            _faults.Add(ChainFaultKind.NoStates, [], 0, Messages.NoStatesInPaths);
+        }
+
+        _faults.ThrowIfAny();
+        var space = states.ToStateSpace();
+        return new TransitionCounts<TState>(space, _moves.ToRows(space.Count), _paths, log: null);
+    }
+
+    private int Locate(TState state, long step)
+    {
+        if (state is null)
+        {
+            _faults.Add(ChainFaultKind.NullState, [], step, Messages.NullStateInPath(_paths, step));
+            return -1;
+        }
+
+        var position = states.Locate(state);
+        if (position < 0)
+        {
+            _faults.Add(ChainFaultKind.UnknownState, [state], step, Messages.UnknownStateInPath(state, _paths, step));
+        }
+
+        return position;
+    }
+}
