@@ -1,3 +1,5 @@
+using Stochastic.Chains.Internal;
+
 namespace Stochastic.Chains;
 
 /// <summary>How a log of events is counted.</summary>
@@ -43,7 +45,16 @@ public sealed record LogOptions<TState>
     /// Gets the states in which an item's history is complete, such as scrapped or sold: an item last seen in one of them is finished,
     /// neither silent nor open. Counting does not stop there if it is seen again. Default: none, besides the state that silence moves to.
     /// </summary>
-    public IReadOnlyList<TState> FinalStates { get; init; } = [];
+    /// <exception cref="ArgumentException">Set to null, or to a list with a null in it.</exception>
+    public IReadOnlyList<TState> FinalStates
+    {
+        get;
+        init
+        {
+            ArgumentNullException.ThrowIfNull(value);
+            field = value.Any(state => state is null) ? throw new ArgumentException(Messages.NullFinalState, nameof(value)) : value;
+        }
+    } = [];
 
     /// <summary>
     /// Gets the instant up to which the log is complete: silence is measured to it, and periods that end by it are counted. Events

@@ -29,15 +29,14 @@ internal sealed record CsvHeader(int ColumnCount, int Item, int Time, int State)
 
     private static int Locate(string column, string[] names, long line, LogFaultCollector faults)
     {
-        var name = column.Trim();
-        var first = Array.IndexOf(names, name);
+        var first = Array.IndexOf(names, column);
         if (first < 0)
         {
-            faults.Add(LogFaultKind.MissingColumn, [line], Messages.MissingColumn(name, line, names));
+            faults.Add(LogFaultKind.MissingColumn, [line], Messages.MissingColumn(column, line, names));
         }
-        else if (Array.IndexOf(names, name, first + 1) >= 0)
+        else if (Array.IndexOf(names, column, first + 1) >= 0)
         {
-            faults.Add(LogFaultKind.RepeatedColumn, [line], Messages.RepeatedColumn(name, line));
+            faults.Add(LogFaultKind.RepeatedColumn, [line], Messages.RepeatedColumn(column, line));
             return -1;
         }
 

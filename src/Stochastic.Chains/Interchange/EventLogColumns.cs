@@ -14,13 +14,28 @@ namespace Stochastic.Chains;
 public sealed record EventLogColumns
 {
     /// <summary>Gets the name of the column that identifies the item.</summary>
-    public required string Item { get; init; }
+    /// <exception cref="ArgumentException">Set to null or to nothing but blanks.</exception>
+    public required string Item
+    {
+        get;
+        init => field = Name(value);
+    }
 
     /// <summary>Gets the name of the column that holds the time.</summary>
-    public required string Time { get; init; }
+    /// <exception cref="ArgumentException">Set to null or to nothing but blanks.</exception>
+    public required string Time
+    {
+        get;
+        init => field = Name(value);
+    }
 
     /// <summary>Gets the name of the column that holds the state.</summary>
-    public required string State { get; init; }
+    /// <exception cref="ArgumentException">Set to null or to nothing but blanks.</exception>
+    public required string State
+    {
+        get;
+        init => field = Name(value);
+    }
 
     /// <summary>Gets the character between two fields. Default: a comma. A tab, or a printable ASCII character other than the quote.</summary>
     public char Separator { get; init; } = ',';
@@ -30,7 +45,12 @@ public sealed record EventLogColumns
     /// is taken. Default: none given, ISO 8601 such as <c>2024-05-06T14:30:00+02:00</c>, <c>2024-05-06 14:30</c> or <c>2024-05-06</c>,
     /// fractions of a second and <c>Z</c> allowed.
     /// </summary>
-    public IReadOnlyList<string> TimeFormats { get; init; } = [];
+    /// <exception cref="ArgumentNullException">Set to null.</exception>
+    public IReadOnlyList<string> TimeFormats
+    {
+        get;
+        init => field = value ?? throw new ArgumentNullException(nameof(value));
+    } = [];
 
     /// <summary>Gets the time zone of times written without an offset. Default: none given, such times are refused.</summary>
     public TimeZoneInfo? TimeZone { get; init; }
@@ -40,4 +60,10 @@ public sealed record EventLogColumns
     /// that never comes, when clocks are set forward, is always refused.
     /// </summary>
     public AmbiguousTimes AmbiguousTimes { get; init; } = AmbiguousTimes.Refuse;
+
+    private static string Name(string value)
+    {
+        ArgumentException.ThrowIfNullOrWhiteSpace(value);
+        return value.Trim();
+    }
 }

@@ -6,6 +6,7 @@ internal static partial class Messages
     internal const string UnknownChoice = "The choice is none of UnobservedStates. Give one of Refuse, Absorbing and Drop.";
     internal const string NoStatesInPaths = "The paths have no states at all. Give at least one path with a state.";
     internal const string EmptyLog = "The log has no events. Give at least one.";
+    internal const string NullFinalState = "A final state is null. Give every state a label.";
     internal const string SilenceNotPositive = "The span of silence must be above zero.";
     internal const string PeriodNotPositive = "A period must be longer than zero.";
 

@@ -20,6 +20,9 @@ internal sealed class GeneralReduction<TNumber>(TNumber[] table, int rows, int c
 {
     private readonly TNumber[] _sums = new TNumber[pivots];
 
+    /// <summary>The pivot of each eliminated state: the sum of its remaining rates.</summary>
+    internal TNumber[] Sums => _sums;
+
     internal void Eliminate(Action<double>? progress, CancellationToken cancellation)
     {
         for (var k = 0; k < pivots; k++)

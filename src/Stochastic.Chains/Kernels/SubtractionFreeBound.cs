@@ -13,15 +13,20 @@ namespace Stochastic.Chains.Kernels;
 /// </remarks>
 internal static class SubtractionFreeBound
 {
+    /// <summary>The factor that makes up for products of roundings.</summary>
+    internal const double SecondOrder = 1.01;
+
     private const double UnitRoundoff = 1.1102230246251565e-16;
-    private const double SecondOrder = 1.01;
     private const double LargestFirstOrder = 0.01;
 
     /// <summary>
     /// The bound for an elimination of some states of a table of so many columns, with at most so many merges in an entry; infinite
     /// where it would say nothing.
     /// </summary>
-    internal static double OfElimination(int pivots, int columns, int merges)
+    internal static double OfElimination(int pivots, int columns, int merges) => OfRoundings(RoundingsOfElimination(pivots, columns, merges));
+
+    /// <summary>How many roundings, of one relative size, the error of an answer amounts to.</summary>
+    internal static double RoundingsOfElimination(int pivots, int columns, int merges)
     {
         var roundings = (2.0 * (pivots + 1) * merges) + (2 * columns) + 4;
         for (var k = 0; k < pivots; k++)
@@ -29,7 +34,7 @@ internal static class SubtractionFreeBound
             roundings += ((2.0 * (pivots - k + 1)) + 1) * (columns - k + 3);
         }
 
-        return OfRoundings(roundings);
+        return roundings;
     }
 
     /// <summary>The bound for so many roundings one after the other: (1 + u)ⁿ − 1, inflated; infinite where it would exceed one hundredth.</summary>

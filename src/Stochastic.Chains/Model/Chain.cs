@@ -122,7 +122,7 @@ public sealed class Chain<TState>
     /// <summary>A fact computed from this chain, made once and kept with it.</summary>
     internal TFact Derive<TFact>(Func<Chain<TState>, TFact> compute)
         where TFact : class =>
-        (TFact)_derived.GetOrAdd(typeof(TFact), static (_, argument) => new Lazy<object>(() => argument.compute(argument.chain)), (compute, chain: this)).Value;
+        (TFact)_derived.GetOrAdd(typeof(TFact), static (_, argument) => new Lazy<object>(() => argument.compute(argument.chain), LazyThreadSafetyMode.PublicationOnly), (compute, chain: this)).Value;
 
     private List<Transition<TState>> RowTransitions(int row) =>
         RowEntries(row).ConvertAll(entry => new Transition<TState>(States[row], States[entry.Column], entry.Probability));

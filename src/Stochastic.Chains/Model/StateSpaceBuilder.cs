@@ -11,6 +11,8 @@ internal sealed class StateSpaceBuilder<TState>(IEqualityComparer<TState> compar
 
     internal int Count => _states.Count;
 
+    internal IReadOnlyList<TState> States => _states;
+
     /// <summary>Reads a complete list of states; nulls and duplicates become faults.</summary>
     internal static StateSpaceBuilder<TState> FromList(IEnumerable<TState> states, IEqualityComparer<TState> comparer, FaultCollector faults)
     {

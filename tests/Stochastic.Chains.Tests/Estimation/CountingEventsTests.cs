@@ -207,6 +207,14 @@ public sealed class CountingEventsTests
     }
 
     [Fact]
+    public void Null_final_states_are_refused_where_they_are_set()
+    {
+        FluentActions.Invoking(() => new LogOptions<string> { FinalStates = null! }).Should().Throw<ArgumentNullException>();
+        FluentActions.Invoking(() => new LogOptions<string> { FinalStates = ["sold", null!] }).Should().Throw<ArgumentException>()
+            .WithMessage("A final state is null. Give every state a label.*");
+    }
+
+    [Fact]
     public void Null_arguments_are_refused()
     {
         FluentActions.Invoking(() => TransitionCounts.FromEvents<string, string>(null!)).Should().Throw<ArgumentNullException>();

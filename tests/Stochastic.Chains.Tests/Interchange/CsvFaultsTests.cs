@@ -201,6 +201,14 @@ public sealed class CsvFaultsTests
     }
 
     [Fact]
+    public void Columns_without_a_name_or_formats_are_refused_where_they_are_set()
+    {
+        FluentActions.Invoking(() => CsvLog.Columns with { Item = " " }).Should().Throw<ArgumentException>();
+        FluentActions.Invoking(() => CsvLog.Columns with { Time = null! }).Should().Throw<ArgumentException>();
+        FluentActions.Invoking(() => CsvLog.Columns with { TimeFormats = null! }).Should().Throw<ArgumentNullException>();
+    }
+
+    [Fact]
     public void Null_arguments_are_refused()
     {
         FluentActions.Invoking(() => EventLog.CountCsv((string)null!, CsvLog.Columns)).Should().Throw<ArgumentNullException>();

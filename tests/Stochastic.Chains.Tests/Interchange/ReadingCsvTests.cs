@@ -143,7 +143,7 @@ public sealed class ReadingCsvTests
 
         counts["clean", "dirty"].Should().Be(60_000);
         counts.Log!.Events.Should().Be(Rows);
-        EventLog.ReadCsv(file.Path, CsvLog.Columns).Select((read, k) => read.Line - k).Should().OnlyContain(difference => difference == 2);
+        EventLog.ReadCsv(file.Path, CsvLog.Columns).Select((read, k) => read.Line - k).Distinct().Should().Equal(2);
         fractions.Should().HaveCountGreaterThan(4).And.OnlyContain(fraction => fraction >= 0 && fraction <= 1).And.Contain(fraction => fraction > 0 && fraction < 1);
     }
 

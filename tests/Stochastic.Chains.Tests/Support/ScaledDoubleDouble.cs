@@ -49,10 +49,7 @@ internal readonly struct ScaledDoubleDouble
 
         var scale = BitConverter.Int64BitsToDouble((1023L - gap) << 52);
         var (sum, error) = TwoSum(large._high, small._high * scale);
-        var (lowSum, lowError) = TwoSum(large._low, small._low * scale);
-        error += lowSum;
-        var high = sum + error;
-        return new(high, error - (high - sum) + lowError, large._exponent);
+        return new(sum, error + (large._low + (small._low * scale)), large._exponent);
     }
 
     public static ScaledDoubleDouble operator *(ScaledDoubleDouble left, ScaledDoubleDouble right)
