@@ -58,6 +58,21 @@ checks.Figure("share of time none runs", plant.Stationary()["none runs"], 8e-6 /
 Chain<int> moves = Chain.FromTransitions([new Transition<int>(7, 9, 1.0), new Transition<int>(9, 7, 1.0)]);
 checks.Figure("period", moves.Structure().Period, 2);
 
+// Counted from a log: of three moves out of "clean", two led to the shop.
+var columns = new EventLogColumns { Item = "crate", Time = "at", State = "stage" };
+using var scans = new StringReader("""
+    crate,at,stage
+    1,2025-01-06T08:00:00Z,clean
+    2,2025-01-06T08:00:00Z,clean
+    1,2025-01-07T08:00:00Z,at shop
+    2,2025-01-07T08:00:00Z,clean
+    1,2025-01-08T08:00:00Z,clean
+    2,2025-01-08T08:00:00Z,at shop
+    """);
+TransitionCounts<string> counts = EventLog.CountCsv(scans, columns);
+checks.Figure("moves counted", counts.TotalCount, 4);
+checks.Figure("probability from counts", counts.ToChain()["clean", "at shop"], 2.0 / 3);
+
 bool isChain = Chain.TryFromMatrix(["a", "b"], new[,] { { 0.5, 0.6 }, { -1, 2 } }, out _, out IReadOnlyList<ChainFault> faults);
 checks.Holds("all faults are listed", !isChain && faults.Count >= 3);
 

@@ -77,17 +77,17 @@ internal static class Certificates
         using var timeout = new CancellationTokenSource(TimeSpan.FromMinutes(1));
         var options = new SolveOptions
         {
-            MemoryLimit = 100,   // bytes; absurdly small, to show the refusal
+            MemoryLimit = 10,   // bytes; absurdly small, to show the refusal
             CancellationToken = timeout.Token,
             Progress = new Progress<SolveProgress>(progress => Console.WriteLine(progress.Fraction)),
         };
         try
         {
-            _ = pump.Stationary(options);
+            _ = pump.Stationary(new EliminationMethod(), options);
         }
         catch (MemoryLimitException tooLarge)
         {
-            Console.WriteLine(tooLarge.Message);
+            Console.WriteLine($"It would need more than {tooLarge.LimitBytes} bytes, so it was not started");
         }
         #endregion
     }
