@@ -1,0 +1,93 @@
+using PackageConsumer;
+using Stochastic.Chains;
+
+// Each main call of the library, on invented chains whose figures can be worked out by hand.
+var checks = new FigureChecks();
+
+// A pool of crates, one step a week. A round through the shop takes 1.25 + 2 + 0.98 + 0.049 weeks and ends the crate's life with
+// probability 0.02 + 0.98 · 0.05 · 0.2 = 0.0298.
+Chain<string> pool = Chain.Build<string>(rows => rows
+    .Row("clean", ("clean", 0.20), ("at shop", 0.80))
+    .Row("at shop", ("at shop", 0.50), ("dirty", 0.49), ("lost", 0.01))
+    .Row("dirty", ("clean", 0.95), ("in repair", 0.05))
+    .Row("in repair", ("clean", 0.80), ("scrapped", 0.20))
+    .Row("lost", ("lost", 1.00))
+    .Row("scrapped", ("scrapped", 1.00)));
+
+StepDistribution<string> inFourWeeks = pool.StartingIn("dirty").After(4);
+checks.Figure("clean after four weeks", inFourWeeks["clean"], 0.36298);
+checks.Figure("lost after four weeks", inFourWeeks["lost"], 0.01324);
+
+var stock = Distribution.FromWeights(pool.States, ("clean", 3), ("at shop", 1));
+checks.Figure("stock at shop after a week", pool.StartingIn(stock).After(1)["at shop"], (0.75 * 0.8) + (0.25 * 0.5));
+
+Absorption<string> ends = pool.Absorption().Require(relativeError: 1e-12);
+checks.Figure("ends up lost", ends.Probability("clean", "lost"), 0.02 / 0.0298);
+checks.Figure("weeks until the end", ends.MeanSteps("clean"), 4.279 / 0.0298);
+checks.Figure("weeks until lost or scrapped", pool.TimeToAny(["lost", "scrapped"]).Mean("clean"), 4.279 / 0.0298);
+
+HittingTimes<string> untilLost = pool.TimeTo("lost");
+checks.Holds("may never be lost", double.IsPositiveInfinity(untilLost.Mean("clean")));
+checks.Figure("ever lost", untilLost.ReachingProbability("clean"), 0.02 / 0.0298);
+
+ChainStructure<string> structure = pool.Structure();
+checks.Holds("two ends", structure.AbsorbingStates.SequenceEqual(["lost", "scrapped"]));
+checks.Holds("no single long run is refused", Refused<ChainStructureException>(() => pool.Stationary()));
+
+// A pump, one step a week: ten weeks new, four worn, one failed.
+double[,] table = { { 0.90, 0.10, 0.00 }, { 0.00, 0.75, 0.25 }, { 1.00, 0.00, 0.00 } };
+Chain<Stage> pump = Chain.FromMatrix([Stage.New, Stage.Worn, Stage.Failed], table);
+StationaryDistribution<Stage> shares = pump.Stationary().Require(relativeError: 1e-12);
+checks.Figure("share new", shares[Stage.New], 10.0 / 15);
+checks.Figure("share failed", shares[Stage.Failed], 1.0 / 15);
+checks.Holds("the certificate is a proof", shares.Certificate.IsProof);
+checks.Figure("share failed, linear system", pump.Stationary(new LinearSystemMethod())[Stage.Failed], 1.0 / 15);
+checks.Figure("share failed, aggregation", pump.Stationary(new AggregationMethod())[Stage.Failed], 1.0 / 15);
+checks.Figure("weeks until failed", pump.TimeTo(Stage.Failed).Mean(Stage.New), 14);
+checks.Holds("tables can be printed", shares.ToString().Contains("Failed", StringComparison.Ordinal));
+
+// Two pumps, either of which is enough, one repair crew; moves per hour.
+Chain<string> plant = Chain.FromRates([
+    new TransitionRate<string>("both run", "one runs", 2e-4),
+    new TransitionRate<string>("one runs", "both run", 0.05),
+    new TransitionRate<string>("one runs", "none runs", 1e-4),
+    new TransitionRate<string>("none runs", "one runs", 0.05)]);
+checks.Figure("hours until none runs", plant.TimeTo("none runs").Mean("both run"), ((3 * 1e-4) + 0.05) / (2 * 1e-4 * 1e-4));
+checks.Figure("share of time none runs", plant.Stationary()["none runs"], 8e-6 / 1.004008);
+
+Chain<int> moves = Chain.FromTransitions([new Transition<int>(7, 9, 1.0), new Transition<int>(9, 7, 1.0)]);
+checks.Figure("period", moves.Structure().Period, 2);
+
+// Counted from a log: of three moves out of "clean", two led to the shop.
+var columns = new EventLogColumns { Item = "crate", Time = "at", State = "stage" };
+using var scans = new StringReader("""
+    crate,at,stage
+    1,2025-01-06T08:00:00Z,clean
+    2,2025-01-06T08:00:00Z,clean
+    1,2025-01-07T08:00:00Z,at shop
+    2,2025-01-07T08:00:00Z,clean
+    1,2025-01-08T08:00:00Z,clean
+    2,2025-01-08T08:00:00Z,at shop
+    """);
+TransitionCounts<string> counts = EventLog.CountCsv(scans, columns);
+checks.Figure("moves counted", counts.TotalCount, 4);
+checks.Figure("probability from counts", counts.ToChain()["clean", "at shop"], 2.0 / 3);
+
+bool isChain = Chain.TryFromMatrix(["a", "b"], new[,] { { 0.5, 0.6 }, { -1, 2 } }, out _, out IReadOnlyList<ChainFault> faults);
+checks.Holds("all faults are listed", !isChain && faults.Count >= 3);
+
+return checks.Close();
+
+static bool Refused<TException>(Action question)
+    where TException : Exception
+{
+    try
+    {
+        question();
+        return false;
+    }
+    catch (TException)
+    {
+        return true;
+    }
+}
