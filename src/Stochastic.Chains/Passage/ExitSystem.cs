@@ -48,8 +48,7 @@ internal sealed class ExitSystem<TState> : IDisposable
     /// <summary>The mean number of steps until an exit, divided by the steps per unit of time.</summary>
     internal ExitSolution MeanTimes()
     {
-        var given = new double[_members.Length];
-        given.AsSpan().Fill(1 / (_chain.UniformizationRate ?? 1));
+        var given = Array.ConvertAll(_members, _ => (ScaledDoubleDouble)(1 / (_chain.UniformizationRate ?? 1)));
         return Solve(given, new double[_chain.StateCount], Messages.TimeOutOfRange);
     }
 
@@ -96,9 +95,9 @@ internal sealed class ExitSystem<TState> : IDisposable
 
     private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
 
-    private double ExitRate(int member, int exit)
+    private ScaledDoubleDouble ExitRate(int member, int exit)
     {
-        var rate = 0.0;
+        var rate = default(ScaledDoubleDouble);
         foreach (var (to, probability) in _chain.Matrix.Row(member))
         {
             rate += IsExit(to) && _exitOf[to] == exit ? probability : 0;
@@ -108,10 +107,10 @@ internal sealed class ExitSystem<TState> : IDisposable
     }
 
     /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
-    private ExitSolution Solve(double[] given, double[] elsewhere, Func<object, long, string> outOfRange)
+    private ExitSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere, Func<object, long, string> outOfRange)
     {
         var mustProve = _options.CertificateLevel == CertificateLevel.Proof;
-        var fast = _staysInRange ? SolveFast(given, elsewhere, mustProve) : null;
+        var fast = _staysInRange ? SolveFast(Array.ConvertAll(given, value => value.ToDouble()), elsewhere, mustProve) : null;
         return fast is not null && (!mustProve || fast.RelativeErrorBound <= TightBound || _members.Length > LargestDoubled)
             ? fast
             : SolveDoubled(given, outOfRange);
@@ -147,10 +146,10 @@ internal sealed class ExitSystem<TState> : IDisposable
             : new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
     }
 
-    private ExitSolution SolveDoubled(double[] given, Func<object, long, string> outOfRange)
+    private ExitSolution SolveDoubled(ScaledDoubleDouble[] given, Func<object, long, string> outOfRange)
     {
         _doubled ??= ReduceDoubled();
-        var solution = Array.ConvertAll(given, value => (ScaledDoubleDouble)value);
+        ScaledDoubleDouble[] solution = [.. given];
         _doubled.SolveRight(solution);
         var values = Array.ConvertAll(solution, value => value.ToDouble());
         for (var k = 0; k < values.Length; k++)
