@@ -26,7 +26,7 @@ public static class EventLog
 {
     private const int BufferSize = 1 << 16;
 
-    private static readonly UTF8Encoding StrictUtf8 = new(encoderShouldEmitUTF8Identifier: false, throwOnInvalidBytes: true);
+    private static UTF8Encoding StrictUtf8 => new(encoderShouldEmitUTF8Identifier: false, throwOnInvalidBytes: true);
 
     /// <summary>Counts the moves in a CSV file; time only orders.</summary>
     /// <param name="path">The file.</param>

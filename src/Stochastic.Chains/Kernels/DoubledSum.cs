@@ -39,9 +39,9 @@ internal struct DoubledSum
     }
 
     /// <summary>
-    /// The right-hand side minus the sum, rounded once more, and an upper bound of its absolute value as if nothing had been rounded.
+    /// The right-hand side minus the sum, rounded once more, and an upper bound of how far it is off what it would be without rounding.
     /// </summary>
-    internal readonly (double Residual, double Bound) ResidualOf(double rightHandSide)
+    internal readonly (double Residual, double Error) ResidualOf(double rightHandSide)
     {
         var difference = rightHandSide - _sum;
         var part = difference - rightHandSide;
@@ -51,6 +51,6 @@ internal struct DoubledSum
         var roundings = (((2.0 * _additions) + 8) * _lowSize) + ((_additions + 3.0) * (_additions + 3) * UnitRoundoff * _size);
         var final = Math.Abs(residual) + Math.Abs(rest) + Math.Abs(_rest);
         var lostToUnderflow = (_additions + 1.0) * 16 * SmallestSubnormal;
-        return (residual, Upward.Add(Math.Abs(residual), (SecondOrder * UnitRoundoff * (roundings + (2 * final))) + lostToUnderflow));
+        return (residual, (SecondOrder * UnitRoundoff * (roundings + (2 * final))) + lostToUnderflow);
     }
 }

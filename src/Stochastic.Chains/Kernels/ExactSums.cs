@@ -65,6 +65,15 @@ internal sealed class ExactSums
         source[0] -= sign * (uint)low;
     }
 
+    /// <summary>Takes the product of a positive number and one of either sign from one sum and adds it to another.</summary>
+    internal void MoveProduct(int from, int to, double first, double second)
+    {
+        var left = Significand.Of(first);
+        var right = Significand.Of(Math.Abs(second));
+        var high = Math.BigMul(left.Bits, right.Bits, out var low);
+        Move(from, to, new UInt128(high, low), left.Exponent + right.Exponent, Math.Sign(second));
+    }
+
     /// <summary>Adds one sum to another; the first is left with its carries made.</summary>
     internal void AddSum(int from, int to)
     {

@@ -36,47 +36,32 @@ internal static class RefinedStationary
             return double.PositiveInfinity;
         }
 
-        var lows = new double[highs.Length];
+        int[] order = [.. states];
+        var others = order[..^1];
+        var refinement = new Refinement(others, highs);
         var flows = new StateFlows<TRows>(rows, states);
-        var others = states[..^1];
-        var residuals = new double[others.Length];
-        var bounds = new double[others.Length];
-        var best = double.PositiveInfinity;
-        var refined = (Highs: highs, Lows: lows);
-        for (var step = 0; ; step++)
+        Func<double[], bool> solve = numbers => factors.SolveLeft(numbers);
+        Func<double> findError = () => LargestError(others, refinement, factors, solveError);
+        refinement.Improve(
+            () => flows.FindImbalances(highs, refinement.Lows, refinement.Residuals, refinement.Bounds), findError, solve, cancellation);
+        if (refinement.NeedsExactResiduals)
         {
-            cancellation.ThrowIfCancellationRequested();
-            flows.FindImbalances(highs, lows, residuals, bounds);
-            if (step > 0)
-            {
-                var error = LargestError(others, highs, bounds, factors, solveError);
-                if (!(error < best))
-                {
-                    break;
-                }
-
-                best = error;
-                refined = (highs.ToArray(), lows.ToArray());
-                if (error <= Refinement.GoodEnough)
-                {
-                    break;
-                }
-            }
-
-            if (step == Refinement.MostSteps || !factors.SolveLeft(residuals) || !Refinement.TryCorrect(others, residuals, highs, lows))
-            {
-                break;
-            }
+            refinement.Improve(
+                () => ExactResiduals.FindImbalances(rows, order, highs, refinement.Lows, refinement.Residuals, refinement.Bounds),
+                findError,
+                solve,
+                cancellation);
         }
 
-        return best < 1 ? Normalize(states, refined.Highs, refined.Lows, best, values) : double.PositiveInfinity;
+        return refinement.Error < 1 ? Normalize(states, refinement, values) : double.PositiveInfinity;
     }
 
     /// <summary>A bound on |v_j − z_j| / z_j over the states.</summary>
     private static double LargestError<TFactors>(
-        ReadOnlySpan<int> states, double[] highs, double[] bounds, TFactors factors, double solveError)
+        int[] states, Refinement refinement, TFactors factors, double solveError)
         where TFactors : IFactors
     {
+        var bounds = refinement.Bounds;
         if (!factors.SolveLeft(bounds))
         {
             return double.PositiveInfinity;
@@ -85,15 +70,16 @@ internal static class RefinedStationary
         var largest = 0.0;
         for (var k = 0; k < bounds.Length; k++)
         {
-            largest = Math.Max(largest, Upward.Divide(bounds[k], highs[states[k]] * (1 - (4 * Refinement.UnitRoundoff))));
+            largest = Math.Max(largest, Upward.Divide(bounds[k], refinement.Highs[states[k]] * (1 - (4 * Refinement.UnitRoundoff))));
         }
 
         return Upward.Divide(largest, Upward.LowerDifference(1, solveError));
     }
 
     /// <summary>Writes the shares, each rounded once, and returns the bound on their relative errors.</summary>
-    private static double Normalize(ReadOnlySpan<int> states, double[] highs, double[] lows, double error, Span<double> values)
+    private static double Normalize(ReadOnlySpan<int> states, Refinement refinement, Span<double> values)
     {
+        var (highs, lows, error) = (refinement.BestHighs, refinement.BestLows, refinement.Error);
         var total = (High: 0.0, Low: 0.0);
         foreach (var state in states)
         {

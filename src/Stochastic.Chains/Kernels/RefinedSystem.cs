@@ -15,6 +15,7 @@ namespace Stochastic.Chains.Kernels;
 internal static class RefinedSystem
 {
     private const int ScaledExponent = 900;
+    private const double EnoughByRatio = Refinement.UnitRoundoff / 16;
     private const double SmallestBound = 2.409919865102884e-181;
 
     /// <summary>
@@ -42,35 +43,23 @@ internal static class RefinedSystem
             return double.PositiveInfinity;
         }
 
-        var lows = new double[highs.Length];
-        var residuals = new double[states.Length];
-        var bounds = new double[states.Length];
+        int[] order = [.. states];
+        var refinement = new Refinement(order, highs);
         var isTimes = given.IndexOf(0.0) < 0 && IsZeroElsewhere(states, values);
-        var best = double.PositiveInfinity;
-        for (var step = 0; ; step++)
+        Func<double[], bool> solve = numbers => factors.SolveRight(numbers);
+        Func<double> findError = () => LargestError(order, rightHandSide, isTimes, refinement, factors, solveError);
+        refinement.Improve(() => FindResiduals(rows, order, rightHandSide, refinement), findError, solve, cancellation);
+        if (refinement.NeedsExactResiduals)
         {
-            cancellation.ThrowIfCancellationRequested();
-            FindResiduals(rows, states, rightHandSide, highs, lows, residuals, bounds);
-            var bound = isTimes ? LargestRatio(bounds, rightHandSide) : double.PositiveInfinity;
-            if (step > 0 && !(bound <= Refinement.GoodEnough))
-            {
-                bound = Math.Min(bound, LargestError(states, highs, bounds, factors, solveError));
-            }
-
-            if (step > 0 && !(bound < best))
-            {
-                return best;
-            }
-
-            best = Math.Min(best, Rounded(states, highs, lows, scale, bound, values));
-            if (bound <= Refinement.GoodEnough
-                || step == Refinement.MostSteps
-                || !factors.SolveRight(residuals)
-                || !Refinement.TryCorrect(states, residuals, highs, lows))
-            {
-                return best;
-            }
+            refinement.Improve(
+                () => ExactResiduals.FindDifferences(
+                    rows, order, rightHandSide, highs, refinement.Lows, refinement.Residuals, refinement.Bounds),
+                findError,
+                solve,
+                cancellation);
         }
+
+        return refinement.Error < 1 ? Rounded(states, refinement, scale, values) : double.PositiveInfinity;
     }
 
     private static double Largest(ReadOnlySpan<double> values)
@@ -109,19 +98,41 @@ internal static class RefinedSystem
     }
 
     /// <summary>The residuals, those that are nothing but rounding set to zero, and upper bounds of their absolute values.</summary>
-    private static void FindResiduals<TRows>(
-        TRows rows, ReadOnlySpan<int> states, ReadOnlySpan<double> given, double[] highs, double[] lows, double[] residuals, double[] bounds)
+    private static void FindResiduals<TRows>(TRows rows, int[] states, double[] given, Refinement refinement)
         where TRows : struct, IRateRows
     {
         for (var k = 0; k < states.Length; k++)
         {
-            var (residual, bound) = rows.Differences(states[k], highs, lows).ResidualOf(given[k]);
-            residuals[k] = Math.Abs(residual) * 2 > bound ? residual : 0;
-            bounds[k] = Math.Max(bound, SmallestBound);
+            var (residual, error) = rows.Differences(states[k], refinement.Highs, refinement.Lows).ResidualOf(given[k]);
+            refinement.Residuals[k] = Math.Abs(residual) > error ? residual : 0;
+            refinement.Bounds[k] = Math.Max(Upward.Add(Math.Abs(residual), error), SmallestBound);
         }
     }
 
-    private static double LargestRatio(ReadOnlySpan<double> bounds, ReadOnlySpan<double> given)
+    /// <summary>A bound on |z_i − h_i| / h_i over the states, with a substitution only where the ratios to the right-hand side are not enough.</summary>
+    private static double LargestError<TFactors>(
+        int[] states, double[] given, bool isTimes, Refinement refinement, TFactors factors, double solveError)
+        where TFactors : IFactors
+    {
+        var bounds = refinement.Bounds;
+        var ratio = isTimes ? LargestRatio(bounds, given) : double.PositiveInfinity;
+        if (ratio <= EnoughByRatio || !factors.SolveRight(bounds))
+        {
+            return ratio;
+        }
+
+        var largest = 0.0;
+        for (var k = 0; k < bounds.Length; k++)
+        {
+            var error = Upward.Divide(bounds[k], Upward.LowerDifference(1, solveError));
+            var least = Upward.LowerDifference(refinement.Highs[states[k]] * (1 - (4 * Refinement.UnitRoundoff)), error);
+            largest = least > 0 ? Math.Max(largest, Upward.Divide(error, least)) : double.PositiveInfinity;
+        }
+
+        return Math.Min(ratio, largest);
+    }
+
+    private static double LargestRatio(double[] bounds, double[] given)
     {
         var largest = 0.0;
         for (var k = 0; k < bounds.Length; k++)
@@ -132,42 +143,24 @@ internal static class RefinedSystem
         return largest;
     }
 
-    private static double LargestError<TFactors>(
-        ReadOnlySpan<int> states, double[] highs, double[] bounds, TFactors factors, double solveError)
-        where TFactors : IFactors
+    /// <summary>Writes the high parts; the bound counts the low parts that are dropped.</summary>
+    private static double Rounded(ReadOnlySpan<int> states, Refinement refinement, int scale, Span<double> values)
     {
-        if (!factors.SolveRight(bounds))
-        {
-            return double.PositiveInfinity;
-        }
-
-        var largest = 0.0;
-        for (var k = 0; k < bounds.Length; k++)
-        {
-            var error = Upward.Divide(bounds[k], Upward.LowerDifference(1, solveError));
-            var least = Upward.LowerDifference(highs[states[k]] * (1 - (4 * Refinement.UnitRoundoff)), error);
-            largest = least > 0 ? Math.Max(largest, Upward.Divide(error, least)) : double.PositiveInfinity;
-        }
-
-        return largest;
-    }
-
-    /// <summary>Takes over the high parts; the bound counts the low parts that are dropped.</summary>
-    private static double Rounded(ReadOnlySpan<int> states, double[] highs, double[] lows, int scale, double bound, Span<double> values)
-    {
-        if (!double.IsFinite(bound))
-        {
-            return bound;
-        }
-
-        var isRounded = false;
         foreach (var state in states)
         {
-            values[state] = Math.ScaleB(highs[state], -scale);
-            isRounded |= lows[state] != 0;
-            bound = double.IsNormal(values[state]) ? bound : double.PositiveInfinity;
+            if (!double.IsNormal(Math.ScaleB(refinement.BestHighs[state], -scale)))
+            {
+                return double.PositiveInfinity;
+            }
         }
 
-        return isRounded ? Upward.Add(bound, Upward.Multiply(Refinement.UnitRoundoff * (1 + (4 * Refinement.UnitRoundoff)), Upward.Add(1, bound))) : bound;
+        foreach (var state in states)
+        {
+            values[state] = Math.ScaleB(refinement.BestHighs[state], -scale);
+        }
+
+        return Upward.Add(
+            refinement.Error,
+            Upward.Multiply(Refinement.UnitRoundoff * (1 + (4 * Refinement.UnitRoundoff)), Upward.Add(1, refinement.Error)));
     }
 }

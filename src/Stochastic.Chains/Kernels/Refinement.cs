@@ -1,31 +1,87 @@
 namespace Stochastic.Chains.Kernels;
 
-/// <summary>When iterative refinement goes on, and how a correction is taken in.</summary>
-internal static class Refinement
+/// <summary>
+/// Iterative refinement of a positive solution that is kept as high + low: each step solves for the residual and is kept when the proved
+/// error gets smaller.
+/// </summary>
+/// <param name="states">The states whose numbers are corrected, in the order of the system.</param>
+/// <param name="highs">The solution by state of the chain; overwritten.</param>
+internal sealed class Refinement(int[] states, double[] highs)
 {
-    /// <summary>The most corrections of one solution.</summary>
-    internal const int MostSteps = 3;
-
     /// <summary>Half a unit in the last place: the rounding of the answer to a double that nothing can avoid.</summary>
     internal const double UnitRoundoff = 1.1102230246251565e-16;
 
-    /// <summary>A relative error before the last rounding with which there is nothing left to gain.</summary>
-    internal const double GoodEnough = UnitRoundoff / 16;
-
+    private const int MostSteps = 3;
+    private const double GoodEnough = UnitRoundoff / 16;
+    private const double WithinReach = UnitRoundoff;
     private const double LargestCorrection = 1.0 / 16;
 
-    /// <summary>Adds corrections to numbers high + low; false when one is so large that refinement cannot be contracting.</summary>
-    internal static bool TryCorrect(ReadOnlySpan<int> states, ReadOnlySpan<double> corrections, double[] highs, double[] lows)
+    internal double[] Highs { get; } = highs;
+
+    internal double[] Lows { get; } = new double[highs.Length];
+
+    /// <summary>The residuals in the order of the system; those that are nothing but rounding are zero.</summary>
+    internal double[] Residuals { get; } = new double[states.Length];
+
+    /// <summary>Upper bounds of the absolute values of the residuals without rounding.</summary>
+    internal double[] Bounds { get; } = new double[states.Length];
+
+    /// <summary>The smallest relative error proved; +∞ before the first step that succeeds.</summary>
+    internal double Error { get; private set; } = double.PositiveInfinity;
+
+    /// <summary>The numbers it was proved of.</summary>
+    internal double[] BestHighs { get; private set; } = highs;
+
+    internal double[] BestLows { get; private set; } = [];
+
+    /// <summary>
+    /// Whether residuals without rounding can be expected to prove more: the error of double-double, about 4 n u² times the condition,
+    /// stands in the way while the condition is still below 1 / u.
+    /// </summary>
+    internal bool NeedsExactResiduals => states.Length <= ExactResiduals.MostStates
+        && Error > WithinReach && Error <= DoubledLoops.SumError(states.Length) / UnitRoundoff;
+
+    /// <summary>Makes up to three steps.</summary>
+    /// <param name="findResiduals">Writes residuals and their bounds.</param>
+    /// <param name="findError">The largest relative error that the bounds prove; may overwrite them.</param>
+    /// <param name="solve">Solves the system in place; false when that is not possible.</param>
+    /// <param name="cancellation">Looked at in each step.</param>
+    internal void Improve(Action findResiduals, Func<double> findError, Func<double[], bool> solve, CancellationToken cancellation)
     {
-        for (var k = 0; k < corrections.Length; k++)
+        for (var step = 0; ; step++)
+        {
+            cancellation.ThrowIfCancellationRequested();
+            findResiduals();
+            if (step > 0)
+            {
+                var error = findError();
+                if (!(error < Error))
+                {
+                    return;
+                }
+
+                (Error, BestHighs, BestLows) = (error, [.. Highs], [.. Lows]);
+            }
+
+            if (Error <= GoodEnough || step == MostSteps || !solve(Residuals) || !TryCorrect())
+            {
+                return;
+            }
+        }
+    }
+
+    /// <summary>False when a correction is so large that refinement cannot be contracting.</summary>
+    private bool TryCorrect()
+    {
+        for (var k = 0; k < Residuals.Length; k++)
         {
             var state = states[k];
-            if (!(Math.Abs(corrections[k]) <= LargestCorrection * highs[state]))
+            if (!(Math.Abs(Residuals[k]) <= LargestCorrection * Highs[state]))
             {
                 return false;
             }
 
-            (highs[state], lows[state]) = DoubleDouble.Add(highs[state], lows[state], corrections[k], 0);
+            (Highs[state], Lows[state]) = DoubleDouble.Add(Highs[state], Lows[state], Residuals[k], 0);
         }
 
         return true;

@@ -53,6 +53,9 @@ internal readonly record struct ScaledDoubleDouble :
 
     internal bool IsZero => High == 0;
 
+    /// <summary>The power of two of the number: it lies from 2^Exponent up to, not including, 2^(Exponent + 1); not for zero.</summary>
+    internal long Exponent => (BlockBits * Block) + Math.ILogB(High);
+
     /// <summary>The number high + low, where |low| is at most half a unit in the last place of high.</summary>
     internal static ScaledDoubleDouble OfParts(double high, double low) => Normalized(high, low);
 

@@ -5,21 +5,17 @@ internal sealed class TreeGrowth
 {
     private const double LargestSubnormal = 2.2250738585072009e-308;
 
-    private readonly int[] _trees;
-    private readonly double[] _heaviest;
-    private readonly int[] _ends;
+    private readonly Node[] _nodes;
     private readonly int[] _champions;
     private readonly List<(int First, int Second, double Flow)> _edges = [];
 
     internal TreeGrowth(int count)
     {
-        _trees = new int[count];
-        _heaviest = new double[count];
-        _ends = new int[count];
+        _nodes = new Node[count];
         _champions = new int[count];
         for (var state = 0; state < count; state++)
         {
-            _trees[state] = state;
+            _nodes[state].Tree = state;
         }
     }
 
@@ -29,25 +25,27 @@ internal sealed class TreeGrowth
     internal void Scan<TRows>(TRows rows, ReadOnlySpan<int> states, double[] weights)
         where TRows : struct, IRateRows
     {
-        var trees = _trees;
-        var heaviest = _heaviest;
-        Array.Fill(heaviest, LargestSubnormal);
+        var nodes = _nodes;
+        foreach (ref var node in nodes.AsSpan())
+        {
+            node.Flow = LargestSubnormal;
+        }
+
         foreach (var from in states)
         {
             var rates = rows.Rates(from);
             var weight = weights[from];
-            var tree = trees[from];
+            ref var node = ref nodes[from];
             for (var position = 0; position < rates.Length; position++)
             {
                 var to = rows.Column(from, position);
-                var flow = weight * rates[position];
-                if (trees[to] == tree || !(flow > Math.Min(heaviest[from], heaviest[to])))
+                ref var other = ref nodes[to];
+                if (other.Tree != node.Tree)
                 {
-                    continue;
+                    var flow = weight * rates[position];
+                    node.Offer(to, flow);
+                    other.Offer(from, flow);
                 }
-
-                Offer(from, to, flow);
-                Offer(to, from, flow);
             }
         }
     }
@@ -58,8 +56,8 @@ internal sealed class TreeGrowth
         Array.Fill(_champions, -1);
         foreach (var state in states)
         {
-            ref var champion = ref _champions[_trees[state]];
-            if (_heaviest[state] > LargestSubnormal && (champion < 0 || _heaviest[state] > _heaviest[champion]))
+            ref var champion = ref _champions[_nodes[state].Tree];
+            if (_nodes[state].Flow > LargestSubnormal && (champion < 0 || _nodes[state].Flow > _nodes[champion].Flow))
             {
                 champion = state;
             }
@@ -70,20 +68,20 @@ internal sealed class TreeGrowth
             var champion = _champions[state];
             if (champion >= 0)
             {
-                Join(champion, _ends[champion], _heaviest[champion]);
+                Join(champion, _nodes[champion].End, _nodes[champion].Flow);
             }
         }
 
         foreach (var state in states)
         {
-            _trees[state] = TreeOf(state);
+            _nodes[state].Tree = TreeOf(state);
         }
     }
 
     /// <summary>The one tree that is left, hung up at a root.</summary>
     internal HeavySpanningTree RootedAt(int root, int count)
     {
-        var starts = new int[_trees.Length + 1];
+        var starts = new int[_nodes.Length + 1];
         foreach (var (first, second, _) in _edges)
         {
             starts[first]++;
@@ -103,8 +101,8 @@ internal sealed class TreeGrowth
         }
 
         var order = new int[count];
-        var parents = new int[_trees.Length];
-        var flows = new double[_trees.Length];
+        var parents = new int[_nodes.Length];
+        var flows = new double[_nodes.Length];
         order[0] = root;
         parents[root] = -1;
         var found = 1;
@@ -127,33 +125,40 @@ internal sealed class TreeGrowth
         return new HeavySpanningTree(order, parents, flows);
     }
 
-    private void Offer(int state, int end, double flow)
-    {
-        if (flow > _heaviest[state])
-        {
-            _heaviest[state] = flow;
-            _ends[state] = end;
-        }
-    }
-
     /// <summary>Trees are kept apart by their numbers, not by the weights of their edges, so ties make no cycle.</summary>
     private void Join(int first, int second, double flow)
     {
         var (firstTree, secondTree) = (TreeOf(first), TreeOf(second));
         if (firstTree != secondTree)
         {
-            _trees[Math.Max(firstTree, secondTree)] = Math.Min(firstTree, secondTree);
+            _nodes[Math.Max(firstTree, secondTree)].Tree = Math.Min(firstTree, secondTree);
             _edges.Add((first, second, flow));
         }
     }
 
     private int TreeOf(int state)
     {
-        while (_trees[state] != state)
+        while (_nodes[state].Tree != state)
         {
-            state = _trees[state] = _trees[_trees[state]];
+            state = _nodes[state].Tree = _nodes[_nodes[state].Tree].Tree;
         }
 
         return state;
+    }
+
+    /// <summary>What is known of a state: its tree, and its heaviest move from or to another tree with the state at the other end.</summary>
+    private struct Node
+    {
+        internal double Flow;
+        internal int Tree;
+        internal int End;
+
+        internal void Offer(int end, double flow)
+        {
+            if (flow > Flow)
+            {
+                (Flow, End) = (flow, end);
+            }
+        }
     }
 }

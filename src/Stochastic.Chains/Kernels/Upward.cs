@@ -8,7 +8,7 @@ internal static class Upward
 {
     private const double LargestArgument = 700;
 
-    internal static double Add(double first, double second) => Math.BitIncrement(first + second);
+    internal static double Add(double first, double second) => first == 0 ? second : second == 0 ? first : Math.BitIncrement(first + second);
 
     internal static double Multiply(double first, double second) => first == 0 || second == 0 ? 0 : Math.BitIncrement(first * second);
 

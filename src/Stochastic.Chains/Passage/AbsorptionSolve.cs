@@ -38,20 +38,20 @@ internal static class AbsorptionSolve<TState>
         var means = system.MeanTimes();
         for (var k = 0; k < transient.Length; k++)
         {
-            meanSteps[transient[k]] = means[k];
+            meanSteps[transient[k]] = means.Values[k];
         }
 
-        evidence.Add(system.RelativeErrorBound, () => system.Residual(1 / (chain.UniformizationRate ?? 1), meanSteps));
+        evidence.Add(means, () => system.Residual(1 / (chain.UniformizationRate ?? 1), meanSteps));
         for (var end = 0; end < ends; end++)
         {
             var column = system.ExitProbabilities(end);
             for (var k = 0; k < transient.Length; k++)
             {
-                probabilities[(transient[k] * ends) + end] = column[k];
+                probabilities[(transient[k] * ends) + end] = column.Values[k];
             }
 
             var values = Enumerable.Range(0, chain.StateCount).Select(state => probabilities[(state * ends) + end]).ToArray();
-            evidence.Add(system.RelativeErrorBound, () => system.Residual(0, values));
+            evidence.Add(column, () => system.Residual(0, values));
         }
     }
 }

@@ -5,24 +5,25 @@ namespace Stochastic.Chains.Passage;
 
 /// <summary>
 /// The equations of the first step over some states that are all left in the end: outflow · x = given + flow-weighted x of the next
-/// states. Reduced once with the exits as explicit columns, then solved for any number of right-hand sides.
+/// states. Reduced once with the exits as explicit columns (Alfa, Xue and Ye 2002), then solved for any number of right-hand sides.
 /// </summary>
 internal sealed class ExitSystem<TState> : IDisposable
     where TState : notnull
 {
-    private const int WideBytes = 16;
+    private const int LargestDoubled = 500;
+    private const double TightBound = 4.4408920985006262e-16;
+    private const int DoubledBytes = 32;
 
     private readonly Chain<TState> _chain;
     private readonly int[] _members;
     private readonly int[] _exitOf;
-    private readonly int _exits;
     private readonly SolveOptions _options;
     private readonly RateTable _rates;
     private readonly WorkTable _table;
     private readonly double[] _sums;
     private readonly bool _staysInRange;
     private readonly int _merges;
-    private GeneralReduction<ScaledDouble>? _wide;
+    private GeneralReduction<ScaledDoubleDouble>? _doubled;
 
     /// <summary>Reduces the system over the members; a move to another state counts as exit number exitOf, or not at all when that is −1.</summary>
     internal ExitSystem(Chain<TState> chain, int[] members, int exits, int[] exitOf, SolveOptions options)
@@ -30,7 +31,6 @@ internal sealed class ExitSystem<TState> : IDisposable
         _chain = chain;
         _members = members;
         _exitOf = exitOf;
-        _exits = exits;
         _options = options;
         _merges = chain.StateCount - members.Length - exits;
         _rates = RateTable.WithExits(chain.Matrix, members, exits, state => exitOf[state]);
@@ -42,49 +42,28 @@ internal sealed class ExitSystem<TState> : IDisposable
             _table.View, _rates.Rows, _rates.Columns, _rates.Rows, _sums, options.Parallelism, InstructionSet.Widest, options.CancellationToken);
     }
 
-    /// <summary>The a priori bound on the relative error of every solution so far.</summary>
-    internal double RelativeErrorBound => Math.Max(
-        _staysInRange ? ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges) : 0,
-        _wide is not null ? SubtractionFreeBound.OfElimination(_rates.Rows, _rates.Columns, _merges) : 0);
-
     /// <summary>Gives the working memory back.</summary>
     public void Dispose() => _table.Dispose();
 
     /// <summary>The mean number of steps until an exit, divided by the steps per unit of time.</summary>
-    internal double[] MeanTimes()
+    internal ExitSolution MeanTimes()
     {
-        var times = Solve(_ => 1);
-        var means = new double[times.Length];
-        for (var k = 0; k < means.Length; k++)
-        {
-            var mean = times[k] / (_chain.UniformizationRate ?? 1);
-            means[k] = mean.ToDouble();
-            if (!double.IsNormal(means[k]))
-            {
-                var state = _chain.States[_members[k]];
-                throw new NumericalRangeException(Messages.TimeOutOfRange(state, mean.Exponent), Text.Label(state));
-            }
-        }
-
-        return means;
+        var given = Array.ConvertAll(_members, _ => (ScaledDoubleDouble)(1 / (_chain.UniformizationRate ?? 1)));
+        return Solve(given, new double[_chain.StateCount], Messages.TimeOutOfRange);
     }
 
     /// <summary>The probability of leaving by one of the exits; rounding never takes it above one.</summary>
-    internal double[] ExitProbabilities(int exit)
+    internal ExitSolution ExitProbabilities(int exit)
     {
-        var solution = Solve(k => ExitRate(k, exit));
-        var probabilities = new double[solution.Length];
-        for (var k = 0; k < probabilities.Length; k++)
+        var atExits = new double[_chain.StateCount];
+        for (var state = 0; state < atExits.Length; state++)
         {
-            probabilities[k] = Math.Min(1, solution[k].ToDouble());
-            if (!solution[k].IsZero && !double.IsNormal(probabilities[k]))
-            {
-                var state = _chain.States[_members[k]];
-                throw new NumericalRangeException(Messages.ProbabilityOutOfRange(state, solution[k].Exponent), Text.Label(state));
-            }
+            atExits[state] = IsExit(state) && _exitOf[state] == exit ? 1 : 0;
         }
 
-        return probabilities;
+        var given = Array.ConvertAll(_members, member => ExitRate(member, exit));
+        var solution = Solve(given, atExits, Messages.ProbabilityOutOfRange);
+        return solution with { Values = Array.ConvertAll(solution.Values, value => Math.Min(1, value)) };
     }
 
     /// <summary>
@@ -114,10 +93,12 @@ internal sealed class ExitSystem<TState> : IDisposable
         return largest;
     }
 
-    private double ExitRate(int member, int exit)
+    private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
+
+    private ScaledDoubleDouble ExitRate(int member, int exit)
     {
-        var rate = 0.0;
-        foreach (var (to, probability) in _chain.Matrix.Row(_members[member]))
+        var rate = default(ScaledDoubleDouble);
+        foreach (var (to, probability) in _chain.Matrix.Row(member))
         {
             rate += IsExit(to) && _exitOf[to] == exit ? probability : 0;
         }
@@ -125,32 +106,82 @@ internal sealed class ExitSystem<TState> : IDisposable
         return rate;
     }
 
-    private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
-
-    private ScaledDouble[] Solve(Func<int, double> given)
+    /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
+    private ExitSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere, Func<object, long, string> outOfRange)
     {
-        var values = new double[_members.Length];
-        for (var k = 0; k < values.Length; k++)
-        {
-            values[k] = given(k);
-        }
-
-        var wide = Array.ConvertAll(values, value => (ScaledDouble)value);
-        if (_wide is null && _staysInRange && ReductionSolve.SolveRight(_table.View, _sums, _members.Length, values))
-        {
-            return Array.ConvertAll(values, value => (ScaledDouble)value);
-        }
-
-        _wide ??= ReduceWide();
-        _wide.SolveRight(wide);
-        return wide;
+        var mustProve = _options.CertificateLevel == CertificateLevel.Proof;
+        var fast = _staysInRange ? SolveFast(Array.ConvertAll(given, value => value.ToDouble()), elsewhere, mustProve) : null;
+        return fast is not null && (!mustProve || fast.RelativeErrorBound <= TightBound || _members.Length > LargestDoubled)
+            ? fast
+            : SolveDoubled(given, outOfRange);
     }
 
-    private GeneralReduction<ScaledDouble> ReduceWide()
+    private ExitSolution? SolveFast(double[] given, double[] elsewhere, bool mustProve)
     {
-        _options.RequireMemory(_rates.Rows, WideBytes * (long)_rates.Rows * _rates.Columns);
-        var reduction = new GeneralReduction<ScaledDouble>(_rates.ToArray<ScaledDouble>(rate => rate), _rates.Rows, _rates.Columns, _rates.Rows);
-        reduction.Eliminate(_options.Report("elimination"), _options.CancellationToken);
+        var solution = given.AsSpan().ToArray();
+        if (!ReductionSolve.SolveRight(_table.View, _sums, _members.Length, solution))
+        {
+            return null;
+        }
+
+        var bound = ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
+        if (!mustProve || !(bound < 1))
+        {
+            return new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
+        }
+
+        // The equations as refinement states them: what is given at the exits stands beside them, not in the right-hand side.
+        var isTimes = Array.TrueForAll(elsewhere, value => value == 0);
+        var values = elsewhere.AsSpan().ToArray();
+        for (var k = 0; k < _members.Length; k++)
+        {
+            values[_members[k]] = solution[k];
+        }
+
+        var rightHandSide = isTimes ? given : new double[given.Length];
+        var refined = _chain.Matrix.OnRates<double, Refinement>(new Refinement(
+            _members, rightHandSide, values, new TableFactors(_table.View, _sums), bound, _options.CancellationToken));
+        return refined < bound
+            ? new ExitSolution(Array.ConvertAll(_members, member => values[member]), ErrorBasis.RefinedMonotone, refined)
+            : new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
+    }
+
+    private ExitSolution SolveDoubled(ScaledDoubleDouble[] given, Func<object, long, string> outOfRange)
+    {
+        _doubled ??= ReduceDoubled();
+        ScaledDoubleDouble[] solution = [.. given];
+        _doubled.SolveRight(solution);
+        var values = Array.ConvertAll(solution, value => value.ToDouble());
+        for (var k = 0; k < values.Length; k++)
+        {
+            if (!solution[k].IsZero && !double.IsNormal(values[k]))
+            {
+                var state = _chain.States[_members[k]];
+                throw new NumericalRangeException(outOfRange(state, solution[k].Exponent), Text.Label(state));
+            }
+        }
+
+        return new ExitSolution(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
+    }
+
+    private GeneralReduction<ScaledDoubleDouble> ReduceDoubled()
+    {
+        _options.RequireMemory(_rates.Rows, DoubledBytes * (long)_rates.Rows * _rates.Columns);
+        var table = _rates.ToArray<ScaledDoubleDouble>(rate => rate);
+        var reduction = new GeneralReduction<ScaledDoubleDouble>(table, _rates.Rows, _rates.Columns, _rates.Rows);
+        if (!DoubledElimination.TryEliminate(table, _rates.Rows, _rates.Columns, reduction.Sums, _options.CancellationToken))
+        {
+            reduction.Eliminate(_options.Report("elimination"), _options.CancellationToken);
+        }
+
         return reduction;
+    }
+
+    private readonly struct Refinement(
+        int[] members, double[] given, double[] values, TableFactors factors, double solveError, CancellationToken cancellation) : IRateAlgorithm<double>
+    {
+        public double Run<TRows>(TRows rows)
+            where TRows : struct, IRateRows =>
+            RefinedSystem.Refine(rows, members, given, values.AsSpan(), factors, solveError, cancellation);
     }
 }

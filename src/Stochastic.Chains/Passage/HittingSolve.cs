@@ -21,16 +21,18 @@ internal static class HittingSolve<TState>
         if (certain.Length > 0)
         {
             using var system = new ExitSystem<TState>(chain, certain, exits: 1, Array.ConvertAll(split.IsTarget, isTarget => isTarget ? 0 : -1), options);
-            Scatter(system.MeanTimes(), certain, means);
-            evidence.Add(system.RelativeErrorBound, () => system.Residual(1 / (chain.UniformizationRate ?? 1), means));
+            var solution = system.MeanTimes();
+            Scatter(solution.Values, certain, means);
+            evidence.Add(solution, () => system.Residual(1 / (chain.UniformizationRate ?? 1), means));
         }
 
         int[] possible = [.. Positions(split.IsPossible)];
         if (possible.Length > 0)
         {
             using var system = new ExitSystem<TState>(chain, possible, exits: 2, Array.ConvertAll(reaching, certainly => certainly == 1 ? 0 : 1), options);
-            Scatter(system.ExitProbabilities(0), possible, reaching);
-            evidence.Add(system.RelativeErrorBound, () => system.Residual(0, reaching));
+            var solution = system.ExitProbabilities(0);
+            Scatter(solution.Values, possible, reaching);
+            evidence.Add(solution, () => system.Residual(0, reaching));
         }
 
         return new HittingTimes<TState>(chain.States, Array.ConvertAll(targets, target => chain.States[target]), means, reaching, evidence.ToCertificate());

@@ -5,12 +5,18 @@ internal sealed class SolveEvidence(SolveOptions options)
 {
     private double _residual;
     private double _bound;
+    private ErrorBasis _basis = ErrorBasis.SubtractionFree;
     private bool _hasSolved;
 
-    internal void Add(double relativeErrorBound, Func<double> residual)
+    /// <summary>Takes in one solution; the weakest of all is what the certificate states.</summary>
+    internal void Add(ExitSolution solution, Func<double> residual)
     {
+        if (!_hasSolved || solution.RelativeErrorBound > _bound)
+        {
+            (_bound, _basis) = (solution.RelativeErrorBound, solution.Basis);
+        }
+
         _hasSolved = true;
-        _bound = Math.Max(_bound, relativeErrorBound);
         if (options.CertificateLevel >= CertificateLevel.Residual)
         {
             _residual = Math.Max(_residual, residual());
@@ -40,7 +46,7 @@ internal sealed class SolveEvidence(SolveOptions options)
             Reason = "Direct and free of subtraction: rare ends and long times keep their digits.",
             Residual = options.CertificateLevel >= CertificateLevel.Residual ? _residual : double.PositiveInfinity,
             RelativeErrorBound = isProof ? _bound : double.PositiveInfinity,
-            Basis = isProof ? ErrorBasis.SubtractionFree : ErrorBasis.None,
+            Basis = isProof ? _basis : ErrorBasis.None,
             IsProof = isProof,
         };
     }

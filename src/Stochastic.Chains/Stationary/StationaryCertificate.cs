@@ -5,9 +5,6 @@ namespace Stochastic.Chains.Stationary;
 /// <summary>Writes the certificate of a stationary vector: the residual of what is returned, and the best bound that can be proved.</summary>
 internal static class StationaryCertificate
 {
-    /// <summary>Four units of rounding: a bound as good as this is not worth improving.</summary>
-    private const double TightBound = 4.4408920985006262e-16;
-
     internal static Certificate OfSingleState { get; } = new()
     {
         Method = "structure",
@@ -39,7 +36,7 @@ internal static class StationaryCertificate
     /// <summary>What the method proves, or what balancing the flows proves where that is better and the method's proof is not tight.</summary>
     private static (ErrorBasis Basis, double Relative) BestBound(StationaryProblem problem, StationaryVector vector, double[] shares)
     {
-        if (vector.ProvedBound <= TightBound)
+        if (vector.ProvedBound <= StationaryElimination.TightBound)
         {
             return (vector.ProvedBasis, vector.ProvedBound);
         }

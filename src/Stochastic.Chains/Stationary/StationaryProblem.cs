@@ -57,6 +57,9 @@ public sealed class StationaryProblem
     /// <summary>The probability of staying in each state: one minus its outflow where a stay was given, else nothing.</summary>
     internal double[] Stays => _stays.Value;
 
+    /// <summary>The entries of the class from a vector over all states of the chain.</summary>
+    internal double[] Select(double[] values) => Array.ConvertAll(_members, member => values[member]);
+
     /// <summary>Lists the moves out of a state to other states of the class: the data of the problem. Stays are left out.</summary>
     /// <param name="state">A state, from 0 to <see cref="StateCount"/> − 1.</param>
     /// <exception cref="ArgumentOutOfRangeException">There is no such state.</exception>

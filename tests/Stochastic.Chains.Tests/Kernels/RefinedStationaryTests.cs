@@ -43,7 +43,7 @@ public class RefinedStationaryTests
             refined.Should().Equal(start, "{0}", trial);
         }
 
-        if (trial.JumpsToLargest * UnitRoundoff * (trial.Count + 13) < 1.0 / 8)
+        if (trial.JumpsToLargest * UnitRoundoff < 1.0 / 16)
         {
             bound.Should().BeLessThanOrEqualTo(ProvedUnits * UnitRoundoff, "{0}: {1} jumps", trial, trial.JumpsToLargest);
         }

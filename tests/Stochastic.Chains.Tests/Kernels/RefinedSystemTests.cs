@@ -54,7 +54,7 @@ public class RefinedSystemTests
             refined.Should().Equal(start, "{0}", trial);
         }
 
-        if (trial.Jumps * UnitRoundoff * (count + 13) < 1.0 / 8)
+        if (trial.Jumps * UnitRoundoff < 1.0 / 16)
         {
             bound.Should().BeLessThanOrEqualTo(ProvedUnits * UnitRoundoff, "{0}: {1} jumps", trial, trial.Jumps);
         }

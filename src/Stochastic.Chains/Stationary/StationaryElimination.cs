@@ -1,0 +1,150 @@
+using Stochastic.Chains.Kernels;
+
+namespace Stochastic.Chains.Stationary;
+
+/// <summary>The ways to eliminate, from the fastest to the most careful; each is left for the next where it cannot do what is asked.</summary>
+internal static class StationaryElimination
+{
+    /// <summary>The largest class for which the elimination is repeated in twice the precision for a proof.</summary>
+    internal const int LargestDoubled = 500;
+
+    /// <summary>Four units of rounding: a bound as good as this is not worth improving.</summary>
+    internal const double TightBound = 4.4408920985006262e-16;
+
+    private const int WideBytes = 16;
+    private const int DoubledBytes = 32;
+    private const double SmallReference = 1.0 / 16;
+
+    internal static StationaryVector Solve(StationaryProblem problem, InstructionSet instructions)
+    {
+        var mustProve = problem.Options.CertificateLevel == CertificateLevel.Proof;
+        var order = problem.Members.ToArray();
+        var fast = SolveFast(problem, order, instructions, mustProve);
+        if (fast is not null && (!mustProve || fast.ProvedBound <= TightBound))
+        {
+            return fast;
+        }
+
+        // Refinement contracts when the state that is kept has a large share.
+        if (fast is not null && LargestShare(fast) is var largest && fast.Values.Span[^1] < SmallReference * fast.Values.Span[largest])
+        {
+            (order[largest], order[^1]) = (order[^1], order[largest]);
+            var retried = SolveFast(problem, order, instructions, mustProve: true);
+            fast = retried?.ProvedBound < fast.ProvedBound ? retried : fast;
+        }
+
+        if (fast?.ProvedBound <= TightBound)
+        {
+            return fast;
+        }
+
+        return mustProve && problem.StateCount <= LargestDoubled ? SolveDoubled(problem) : fast ?? SolveWide(problem);
+    }
+
+    /// <summary>Elimination in doubles, refined where a proof is asked for; null where a product could leave their range.</summary>
+    /// <param name="problem">The class.</param>
+    /// <param name="order">The states of the class by their positions in the chain, in the order of elimination; the last is kept.</param>
+    /// <param name="instructions">The vectors to compute with.</param>
+    /// <param name="mustProve">Whether to refine.</param>
+    private static StationaryVector? SolveFast(StationaryProblem problem, int[] order, InstructionSet instructions, bool mustProve)
+    {
+        var size = order.Length;
+        var options = problem.Options;
+        using var table = WorkTable.Rent(size, size);
+        RateTable.Among(problem.Matrix, order).CopyTo(table.View);
+        var sums = new double[size - 1];
+        var shares = new double[size];
+        if (!StateReduction.Eliminate(table.View, size, size, size - 1, sums, options.Parallelism, instructions, options.CancellationToken)
+            || !ReductionSolve.Stationary(table.View, size, shares))
+        {
+            return null;
+        }
+
+        var values = new double[problem.Matrix.Size];
+        for (var k = 0; k < size; k++)
+        {
+            values[order[k]] = shares[k];
+        }
+
+        var bound = ReductionBound.OfStationary(size);
+        var refined = mustProve
+            ? problem.Matrix.OnRates<double, Refinement>(new Refinement(order, values, new TableFactors(table.View, sums), options.CancellationToken))
+            : double.PositiveInfinity;
+        return new StationaryVector(problem.Select(values))
+        {
+            HasConverged = true,
+            Reason = refined < bound
+                ? "Direct and free of subtraction, then refined in twice the precision."
+                : "Direct and free of subtraction: every share keeps its digits.",
+            ProvedBasis = refined < bound ? ErrorBasis.RefinedMonotone : ErrorBasis.SubtractionFree,
+            ProvedBound = Math.Min(refined, bound),
+        };
+    }
+
+    private static StationaryVector SolveWide(StationaryProblem problem)
+    {
+        var size = problem.StateCount;
+        problem.Options.RequireMemory(size, WideBytes * (long)size * size);
+        var reduction = new GeneralReduction<ScaledDouble>(problem.Rates.ToArray<ScaledDouble>(rate => rate), size, size, size - 1);
+        reduction.Eliminate(problem.Options.Report("elimination"), problem.Options.CancellationToken);
+        var weights = new ScaledDouble[size];
+        weights[^1] = ScaledDouble.One;
+        reduction.ExtendLeft(weights);
+        var total = weights.Aggregate((sum, weight) => sum + weight);
+        return new StationaryVector(Array.ConvertAll(weights, weight => (weight / total).ToDouble()))
+        {
+            HasConverged = true,
+            Reason = "Direct and free of subtraction; repeated with wider exponents because some products lie outside the range of a double.",
+            ProvedBasis = ErrorBasis.SubtractionFree,
+            ProvedBound = SubtractionFreeBound.OfElimination(size - 1, size, merges: 0),
+        };
+    }
+
+    private static StationaryVector SolveDoubled(StationaryProblem problem)
+    {
+        var size = problem.StateCount;
+        problem.Options.RequireMemory(size, DoubledBytes * (long)size * size);
+        var table = problem.Rates.ToArray<ScaledDoubleDouble>(rate => rate);
+        var reduction = new GeneralReduction<ScaledDoubleDouble>(table, size, size, size - 1);
+        if (!DoubledElimination.TryEliminate(table, size, size, reduction.Sums, problem.Options.CancellationToken))
+        {
+            reduction.Eliminate(problem.Options.Report("elimination"), problem.Options.CancellationToken);
+        }
+
+        var weights = new ScaledDoubleDouble[size];
+        weights[^1] = ScaledDoubleDouble.One;
+        reduction.ExtendLeft(weights);
+        var total = weights.Aggregate((sum, weight) => sum + weight);
+        return new StationaryVector(Array.ConvertAll(weights, weight => (weight / total).ToDouble()))
+        {
+            HasConverged = true,
+            Reason = "Direct and free of subtraction, repeated in twice the precision and rounded once.",
+            ProvedBasis = ErrorBasis.DoubledElimination,
+            ProvedBound = DoubledElimination.RelativeErrorBound(size - 1, size, merges: 0),
+        };
+    }
+
+    private static int LargestShare(StationaryVector vector)
+    {
+        var shares = vector.Values.Span;
+        var largest = 0;
+        for (var k = 1; k < shares.Length; k++)
+        {
+            largest = shares[k] > shares[largest] ? k : largest;
+        }
+
+        return largest;
+    }
+
+    private readonly struct Refinement(int[] order, double[] values, TableFactors factors, CancellationToken cancellation) : IRateAlgorithm<double>
+    {
+        public double Run<TRows>(TRows rows)
+            where TRows : struct, IRateRows
+        {
+            var solveError = ReductionBound.OfSystem(order.Length - 1, order.Length, merges: 0);
+            return solveError < 1
+                ? RefinedStationary.Refine(rows, order, values.AsSpan(), factors, solveError, cancellation)
+                : double.PositiveInfinity;
+        }
+    }
+}
