@@ -54,9 +54,11 @@ internal static class WhereItSettles
         foreach (IStationaryMethod method in new IStationaryMethod[] { new EliminationMethod(), new AggregationMethod(), new LinearSystemMethod() })
         {
             StationaryDistribution<string> shares = halves.Stationary(method);
+            Certificate proof = shares.Certificate;
             double error = Math.Abs((shares["a1"] / exact) - 1);
             string verdict = error < 1e-12 ? "right to twelve digits" : $"wrong by {error:P0}";
-            Console.WriteLine($"{method.Name}: {verdict}, balanced to fourteen: {shares.Certificate.Residual < 1e-14}, proved: {shares.Certificate.IsProof}");
+            Console.WriteLine($"{method.Name}: {verdict}");
+            Console.WriteLine($"    in balance to fourteen digits: {proof.Residual < 1e-14}, proved to twelve: {proof.RelativeErrorBound < 1e-12}");
         }
         #endregion
     }
