@@ -41,19 +41,28 @@ internal static class StationarySolve<TState>
             throw new ArgumentException(Messages.WrongLength(method, raw.Length, members.Length), nameof(vector));
         }
 
+        for (var k = 0; k < raw.Length; k++)
+        {
+            if (!(raw[k] > 0) || !double.IsFinite(raw[k]))
+            {
+                throw Refuse(chain.States[members[k]], method, raw[k]);
+            }
+        }
+
         var sum = vector.ProvedBasis == ErrorBasis.None ? CompensatedSum.Of(raw) : 1;
         var shares = new double[raw.Length];
         for (var k = 0; k < shares.Length; k++)
         {
             shares[k] = raw[k] / sum;
-            if (!double.IsNormal(shares[k]) || shares[k] < 0 || !double.IsFinite(sum))
+            if (!double.IsNormal(shares[k]))
             {
-                var state = chain.States[members[k]];
-                var message = raw[k] >= 0 ? Messages.ShareTooSmall(state) : Messages.NotPositive(method, state, raw[k]);
-                throw new NumericalRangeException(message, Text.Label(state));
+                throw Refuse(chain.States[members[k]], method, raw[k]);
             }
         }
 
         return shares;
     }
+
+    private static NumericalRangeException Refuse(TState state, string method, double value) => new(
+        value >= 0 && double.IsFinite(value) ? Messages.ShareTooSmall(state) : Messages.NotPositive(method, state, value), Text.Label(state));
 }
