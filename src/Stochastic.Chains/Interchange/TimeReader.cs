@@ -16,7 +16,7 @@ internal enum TimeProblem
 /// <summary>Reads times in the invariant culture: those with an offset as they are, those without in the time zone of the log.</summary>
 internal sealed class TimeReader(EventLogColumns columns)
 {
-    private static readonly string[] Iso8601 =
+    private static string[] Iso8601 =>
     [
         "yyyy-MM-dd'T'HH:mm:ss.FFFFFFFK",
         "yyyy-MM-dd HH:mm:ss.FFFFFFFK",

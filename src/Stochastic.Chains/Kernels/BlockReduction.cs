@@ -27,70 +27,70 @@ internal sealed class BlockReduction<TKernel> : IDisposable
     /// <summary>Wide blocks save memory traffic, narrow ones work inside the block.</summary>
     internal const int WidestBlock = 96;
 
-    private readonly MatrixView table;
-    private readonly int rows;
-    private readonly int columns;
-    private readonly double[] sums;
-    private readonly WorkSharing sharing;
-    private readonly BlockTriangles<TKernel> triangles = new(WidestBlock);
-    private readonly PooledBuffer rates;
-    private readonly PooledBuffer factors;
-    private readonly PooledBuffer rateExtents;
-    private readonly PooledBuffer factorExtents;
-    private readonly Action<int> packPiece;
-    private readonly Action<int> solvePiece;
-    private readonly Action<int> updatePiece;
+    private readonly MatrixView _table;
+    private readonly int _rows;
+    private readonly int _columns;
+    private readonly double[] _sums;
+    private readonly WorkSharing _sharing;
+    private readonly BlockTriangles<TKernel> _triangles = new(WidestBlock);
+    private readonly PooledBuffer _rates;
+    private readonly PooledBuffer _factors;
+    private readonly PooledBuffer _rateExtents;
+    private readonly PooledBuffer _factorExtents;
+    private readonly Action<int> _packPiece;
+    private readonly Action<int> _solvePiece;
+    private readonly Action<int> _updatePiece;
 
-    private int first;
-    private int next;
-    private int depth;
+    private int _first;
+    private int _next;
+    private int _depth;
 
     internal BlockReduction(MatrixView table, int rows, int columns, double[] sums, WorkSharing sharing)
     {
-        this.table = table;
-        this.rows = rows;
-        this.columns = columns;
-        this.sums = sums;
-        this.sharing = sharing;
-        rates = PooledBuffer.Rent(checked(ColumnPanels<TKernel>.Size(columns, WidestBlock)));
-        factors = PooledBuffer.Rent(checked(RowPanels<TKernel>.Size(rows, WidestBlock)));
-        rateExtents = PooledBuffer.Rent(Groups(columns) * WidestBlock * 2);
-        factorExtents = PooledBuffer.Rent(Groups(rows) * WidestBlock * 2);
-        packPiece = Pack;
-        solvePiece = Solve;
-        updatePiece = Update;
+        _table = table;
+        _rows = rows;
+        _columns = columns;
+        _sums = sums;
+        _sharing = sharing;
+        _rates = PooledBuffer.Rent(checked(ColumnPanels<TKernel>.Size(columns, WidestBlock)));
+        _factors = PooledBuffer.Rent(checked(RowPanels<TKernel>.Size(rows, WidestBlock)));
+        _rateExtents = PooledBuffer.Rent(Groups(columns) * WidestBlock * 2);
+        _factorExtents = PooledBuffer.Rent(Groups(rows) * WidestBlock * 2);
+        _packPiece = Pack;
+        _solvePiece = Solve;
+        _updatePiece = Update;
     }
 
-    private int Right => columns - next;
+    private int Right => _columns - _next;
 
-    private int Below => rows - next;
+    private int Below => _rows - _next;
 
     /// <summary>Eliminates the states 0..pivots-1; false when a product could leave the normal range, with the table half done.</summary>
     internal bool Eliminate(int pivots)
     {
-        for (first = 0; first < pivots && Math.Min(rows, columns) - first >= SmallestTable; first = next)
+        for (_first = 0; _first < pivots && Math.Min(_rows, _columns) - _first >= SmallestTable; _first = _next)
         {
-            next = Math.Min(first + WidthOfNextBlock(), pivots);
-            depth = (next - first + TKernel.Width - 1) / TKernel.Width * TKernel.Width;
+            _next = Math.Min(_first + WidthOfNextBlock(), pivots);
+            _depth = (_next - _first + TKernel.Width - 1) / TKernel.Width * TKernel.Width;
             var outcome = EliminateBlock();
             if (outcome == BlockOutcome.OutOfRange
-                || (outcome == BlockOutcome.Untouched && !RowReduction<TKernel>.Eliminate(table, rows, columns, first, next, sums, sharing.Cancellation)))
+                || (outcome == BlockOutcome.Untouched && !RowReduction<TKernel>.Eliminate(_table, _rows, _columns, _first, _next, _sums, _sharing.Cancellation)))
             {
                 return false;
             }
         }
 
-        return RowReduction<TKernel>.Eliminate(table, rows, columns, first, pivots, sums, sharing.Cancellation);
+        return RowReduction<TKernel>.Eliminate(_table, _rows, _columns, _first, pivots, _sums, _sharing.Cancellation);
     }
 
     /// <summary>Gives all working memory back to the pool.</summary>
     public void Dispose()
     {
-        triangles.Dispose();
-        rates.Dispose();
-        factors.Dispose();
-        rateExtents.Dispose();
-        factorExtents.Dispose();
+        _triangles.Dispose();
+        _rates.Dispose();
+        _factors.Dispose();
+        _rateExtents.Dispose();
+        _factorExtents.Dispose();
     }
 
     private static int Groups(int extent) => (extent + Group - 1) / Group;
@@ -98,7 +98,7 @@ internal sealed class BlockReduction<TKernel> : IDisposable
     /// <summary>The columns to the right of a block shall be whole tiles.</summary>
     private int WidthOfNextBlock()
     {
-        var remaining = columns - first;
+        var remaining = _columns - _first;
         var widest = remaining > 1000 ? 96 : remaining > 500 ? 72 : 48;
         var excess = (widest - remaining) % TKernel.TileColumns;
         return widest - (excess < 0 ? excess + TKernel.TileColumns : excess);
@@ -106,32 +106,32 @@ internal sealed class BlockReduction<TKernel> : IDisposable
 
     private BlockOutcome EliminateBlock()
     {
-        var width = next - first;
+        var width = _next - _first;
         var rowGroups = Groups(Below);
         var columnGroups = Groups(Right);
 
-        sharing.Run(columnGroups + rowGroups, packPiece);
-        var rests = rateExtents.Slice(0, depth);
-        var smallestRates = rateExtents.Slice(depth, depth);
-        var smallestFactors = factorExtents.Slice(0, depth);
-        var largestFactors = factorExtents.Slice(depth, depth);
+        _sharing.Run(columnGroups + rowGroups, _packPiece);
+        var rests = _rateExtents.Slice(0, _depth);
+        var smallestRates = _rateExtents.Slice(_depth, _depth);
+        var smallestFactors = _factorExtents.Slice(0, _depth);
+        var largestFactors = _factorExtents.Slice(_depth, _depth);
         GatherExtents();
-        if (!triangles.Eliminate(table.From(first, first), width, depth, rests, smallestRates, smallestFactors, sharing.Cancellation))
+        if (!_triangles.Eliminate(_table.From(_first, _first), width, _depth, rests, smallestRates, smallestFactors, _sharing.Cancellation))
         {
             return BlockOutcome.Untouched;
         }
 
-        triangles.CopyTo(table.From(first, first), sums.AsSpan(first, width));
-        sharing.Run(columnGroups + rowGroups, solvePiece);
+        _triangles.CopyTo(_table.From(_first, _first), _sums.AsSpan(_first, width));
+        _sharing.Run(columnGroups + rowGroups, _solvePiece);
         GatherExtents();
-        VectorLoops.Multiply(triangles.Reciprocals, smallestFactors);
-        VectorLoops.Multiply(triangles.Reciprocals, largestFactors);
+        VectorLoops.Multiply(_triangles.Reciprocals, smallestFactors);
+        VectorLoops.Multiply(_triangles.Reciprocals, largestFactors);
         if (!NormalRange.Holds(smallestFactors, largestFactors) || !NormalRange.KeepsProducts(smallestFactors, smallestRates))
         {
             return BlockOutcome.OutOfRange;
         }
 
-        sharing.Run((Below + UpdateRows - 1) / UpdateRows, updatePiece);
+        _sharing.Run((Below + UpdateRows - 1) / UpdateRows, _updatePiece);
         return BlockOutcome.Eliminated;
     }
 
@@ -142,14 +142,14 @@ internal sealed class BlockReduction<TKernel> : IDisposable
         {
             var column = piece * Group;
             ColumnPanels<TKernel>.Pack(
-                table.From(first, next + column), next - first, Math.Min(Group, Right - column), depth, ref rates[column * depth]);
+                _table.From(_first, _next + column), _next - _first, Math.Min(Group, Right - column), _depth, ref _rates[column * _depth]);
             MeasureRates(piece);
         }
         else
         {
             var row = (piece - columnGroups) * Group;
             RowPanels<TKernel>.Pack(
-                table.From(next + row, first), Math.Min(Group, Below - row), next - first, depth, ref factors[row * depth]);
+                _table.From(_next + row, _first), Math.Min(Group, Below - row), _next - _first, _depth, ref _factors[row * _depth]);
             MeasureFactors(piece - columnGroups);
         }
     }
@@ -161,18 +161,18 @@ internal sealed class BlockReduction<TKernel> : IDisposable
         {
             var column = piece * Group;
             var count = Math.Min(Group, Right - column);
-            triangles.SolveRates(ref rates[column * depth], count, depth);
-            ColumnPanels<TKernel>.Unpack(ref rates[column * depth], depth, table.From(first, next + column), next - first, count);
+            _triangles.SolveRates(ref _rates[column * _depth], count, _depth);
+            ColumnPanels<TKernel>.Unpack(ref _rates[column * _depth], _depth, _table.From(_first, _next + column), _next - _first, count);
             MeasureRates(piece);
         }
         else
         {
             var row = (piece - columnGroups) * Group;
             var count = Math.Min(Group, Below - row);
-            triangles.SolveFactors(ref factors[row * depth], count, depth);
+            _triangles.SolveFactors(ref _factors[row * _depth], count, _depth);
             MeasureFactors(piece - columnGroups);
-            RowPanels<TKernel>.ScaleColumns(ref factors[row * depth], count, depth, ref triangles.Reciprocals[0]);
-            RowPanels<TKernel>.Unpack(ref factors[row * depth], depth, table.From(next + row, first), count, next - first);
+            RowPanels<TKernel>.ScaleColumns(ref _factors[row * _depth], count, _depth, ref _triangles.Reciprocals[0]);
+            RowPanels<TKernel>.Unpack(ref _factors[row * _depth], _depth, _table.From(_next + row, _first), count, _next - _first);
         }
     }
 
@@ -180,44 +180,44 @@ internal sealed class BlockReduction<TKernel> : IDisposable
     {
         var row = piece * UpdateRows;
         PanelProduct<TKernel>.Add(
-            ref factors[row * depth], ref rates[0], depth, table.From(next + row, next), Math.Min(UpdateRows, Below - row), Right);
+            ref _factors[row * _depth], ref _rates[0], _depth, _table.From(_next + row, _next), Math.Min(UpdateRows, Below - row), Right);
     }
 
     private void MeasureRates(int group)
     {
-        var extents = rateExtents.Slice(group * depth * 2, depth * 2);
+        var extents = _rateExtents.Slice(group * _depth * 2, _depth * 2);
         ColumnPanels<TKernel>.MeasureRows(
-            ref rates[group * Group * depth], Math.Min(Group, Right - (group * Group)), depth, ref extents[0], ref extents[depth]);
+            ref _rates[group * Group * _depth], Math.Min(Group, Right - (group * Group)), _depth, ref extents[0], ref extents[_depth]);
     }
 
     private void MeasureFactors(int group)
     {
-        var extents = factorExtents.Slice(group * depth * 2, depth * 2);
-        extents[..depth].Fill(double.PositiveInfinity);
-        extents[depth..].Clear();
+        var extents = _factorExtents.Slice(group * _depth * 2, _depth * 2);
+        extents[.._depth].Fill(double.PositiveInfinity);
+        extents[_depth..].Clear();
         RowPanels<TKernel>.MeasureColumns(
-            ref factors[group * Group * depth], Math.Min(Group, Below - (group * Group)), depth, ref extents[0], ref extents[depth]);
+            ref _factors[group * Group * _depth], Math.Min(Group, Below - (group * Group)), _depth, ref extents[0], ref extents[_depth]);
     }
 
     /// <summary>Merges the measures of all groups into those of the first, always in the same order.</summary>
     private void GatherExtents()
     {
-        var rests = rateExtents.Slice(0, depth);
-        var smallestRates = rateExtents.Slice(depth, depth);
+        var rests = _rateExtents.Slice(0, _depth);
+        var smallestRates = _rateExtents.Slice(_depth, _depth);
         for (var group = 1; group < Groups(Right); group++)
         {
-            var extents = rateExtents.Slice(group * depth * 2, depth * 2);
-            VectorLoops.AddScaled(1, extents[..depth], rests);
-            VectorLoops.LowerTo(extents[depth..], smallestRates);
+            var extents = _rateExtents.Slice(group * _depth * 2, _depth * 2);
+            VectorLoops.AddScaled(1, extents[.._depth], rests);
+            VectorLoops.LowerTo(extents[_depth..], smallestRates);
         }
 
-        var smallestFactors = factorExtents.Slice(0, depth);
-        var largestFactors = factorExtents.Slice(depth, depth);
+        var smallestFactors = _factorExtents.Slice(0, _depth);
+        var largestFactors = _factorExtents.Slice(_depth, _depth);
         for (var group = 1; group < Groups(Below); group++)
         {
-            var extents = factorExtents.Slice(group * depth * 2, depth * 2);
-            VectorLoops.LowerTo(extents[..depth], smallestFactors);
-            VectorLoops.RaiseTo(extents[depth..], largestFactors);
+            var extents = _factorExtents.Slice(group * _depth * 2, _depth * 2);
+            VectorLoops.LowerTo(extents[.._depth], smallestFactors);
+            VectorLoops.RaiseTo(extents[_depth..], largestFactors);
         }
     }
 }

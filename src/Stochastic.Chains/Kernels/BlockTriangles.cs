@@ -9,20 +9,20 @@ namespace Stochastic.Chains.Kernels;
 internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
     where TKernel : struct, ITileKernel
 {
-    private readonly PooledBuffer work = PooledBuffer.Rent(widest * (widest + TKernel.Width));
-    private readonly PooledBuffer triangle = PooledBuffer.Rent(widest * widest);
-    private readonly PooledBuffer lower = PooledBuffer.Rent(widest * widest);
-    private readonly PooledBuffer upper = PooledBuffer.Rent(widest * widest);
-    private readonly PooledBuffer upperPanels = PooledBuffer.Rent(ColumnPanels<TKernel>.Size(widest, widest));
-    private readonly PooledBuffer pivots = PooledBuffer.Rent(widest);
-    private readonly PooledBuffer reciprocals = PooledBuffer.Rent(widest);
-    private readonly PooledBuffer extents = PooledBuffer.Rent(2 * widest);
+    private readonly PooledBuffer _work = PooledBuffer.Rent(widest * (widest + TKernel.Width));
+    private readonly PooledBuffer _triangle = PooledBuffer.Rent(widest * widest);
+    private readonly PooledBuffer _lower = PooledBuffer.Rent(widest * widest);
+    private readonly PooledBuffer _upper = PooledBuffer.Rent(widest * widest);
+    private readonly PooledBuffer _upperPanels = PooledBuffer.Rent(ColumnPanels<TKernel>.Size(widest, widest));
+    private readonly PooledBuffer _pivots = PooledBuffer.Rent(widest);
+    private readonly PooledBuffer _reciprocals = PooledBuffer.Rent(widest);
+    private readonly PooledBuffer _extents = PooledBuffer.Rent(2 * widest);
 
-    private int blockWidth;
-    private int blockDepth;
+    private int _blockWidth;
+    private int _blockDepth;
 
     /// <summary>The reciprocals of the pivots of the block, padded with ones.</summary>
-    internal Span<double> Reciprocals => reciprocals.Slice(0, blockDepth);
+    internal Span<double> Reciprocals => _reciprocals.Slice(0, _blockDepth);
 
     /// <summary>
     /// Eliminates the block of the given width, padded to a depth, leaving the table as it is. Given are the sums of the rates right of
@@ -33,10 +33,10 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
         MatrixView block, int width, int depth, ReadOnlySpan<double> rests, ReadOnlySpan<double> smallestRates, ReadOnlySpan<double> smallestBelow,
         CancellationToken cancellation)
     {
-        blockWidth = width;
-        blockDepth = depth;
+        _blockWidth = width;
+        _blockDepth = depth;
         var stride = depth + TKernel.Width;
-        var square = new MatrixView(work.Values, work.Start, stride);
+        var square = new MatrixView(_work.Values, _work.Start, stride);
         square.Row(0, 0, depth * stride).Clear();
         for (var row = 0; row < width; row++)
         {
@@ -44,15 +44,15 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
             square[row, depth] = rests[row];
         }
 
-        if (!RowReduction<TKernel>.Eliminate(square, width, stride, 0, width, pivots.Slice(0, width), cancellation))
+        if (!RowReduction<TKernel>.Eliminate(square, width, stride, 0, width, _pivots.Slice(0, width), cancellation))
         {
             return false;
         }
 
-        pivots.Slice(width, depth - width).Fill(1);
+        _pivots.Slice(width, depth - width).Fill(1);
         for (var state = 0; state < depth; state++)
         {
-            reciprocals[state] = 1 / pivots[state];
+            _reciprocals[state] = 1 / _pivots[state];
         }
 
         return InvertLower(square, smallestRates) && InvertUpper(square, smallestBelow);
@@ -61,13 +61,13 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
     /// <summary>Copies factors and rates inside the block to the table, and the pivots.</summary>
     internal void CopyTo(MatrixView block, Span<double> sums)
     {
-        var square = new MatrixView(work.Values, work.Start, blockDepth + TKernel.Width);
-        for (var row = 0; row < blockWidth; row++)
+        var square = new MatrixView(_work.Values, _work.Start, _blockDepth + TKernel.Width);
+        for (var row = 0; row < _blockWidth; row++)
         {
-            square.Row(row, 0, blockWidth).CopyTo(block.Row(row, 0, blockWidth));
+            square.Row(row, 0, _blockWidth).CopyTo(block.Row(row, 0, _blockWidth));
         }
 
-        pivots.Slice(0, blockWidth).CopyTo(sums);
+        _pivots.Slice(0, _blockWidth).CopyTo(sums);
     }
 
     /// <summary>Multiplies column panels by T from the left, in place: each panel from its last rows upwards.</summary>
@@ -80,7 +80,7 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
             for (var row = depth - side; row >= 0; row -= side)
             {
                 TKernel.AddTile(
-                    ref lower[row * depth], ref panel, row + side,
+                    ref _lower[row * depth], ref panel, row + side,
                     ref Unsafe.Add(ref panel, row * TKernel.TileColumns), TKernel.TileColumns, side);
             }
         }
@@ -98,14 +98,14 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
             for (var rest = depth - side; rest >= column; rest -= side)
             {
                 TKernel.AddNarrowTile(
-                    ref panel, ref upperPanels[(column * depth) + rest - column], rest + side,
+                    ref panel, ref _upperPanels[(column * depth) + rest - column], rest + side,
                     ref Unsafe.Add(ref panel, rest * side), side);
             }
 
             for (column -= tile; column >= 0; column -= tile)
             {
                 TKernel.AddTile(
-                    ref panel, ref upperPanels[column * depth], column + tile,
+                    ref panel, ref _upperPanels[column * depth], column + tile,
                     ref Unsafe.Add(ref panel, column * side), side, side * side);
             }
         }
@@ -114,64 +114,64 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
     /// <summary>Gives all working memory back to the pool.</summary>
     public void Dispose()
     {
-        work.Dispose();
-        triangle.Dispose();
-        lower.Dispose();
-        upper.Dispose();
-        upperPanels.Dispose();
-        pivots.Dispose();
-        reciprocals.Dispose();
-        extents.Dispose();
+        _work.Dispose();
+        _triangle.Dispose();
+        _lower.Dispose();
+        _upper.Dispose();
+        _upperPanels.Dispose();
+        _pivots.Dispose();
+        _reciprocals.Dispose();
+        _extents.Dispose();
     }
 
     private bool InvertLower(MatrixView square, ReadOnlySpan<double> smallestRates)
     {
-        var count = blockDepth * blockDepth;
-        var rowMajor = new MatrixView(upperPanels.Values, upperPanels.Start, blockDepth);
-        for (var row = 0; row < blockDepth; row++)
+        var count = _blockDepth * _blockDepth;
+        var rowMajor = new MatrixView(_upperPanels.Values, _upperPanels.Start, _blockDepth);
+        for (var row = 0; row < _blockDepth; row++)
         {
-            var target = rowMajor.Row(row, 0, blockDepth);
+            var target = rowMajor.Row(row, 0, _blockDepth);
             square.Row(row, 0, row).CopyTo(target);
             target[row..].Clear();
         }
 
-        RowPanels<TKernel>.Pack(rowMajor, blockDepth, blockDepth, blockDepth, ref triangle[0]);
-        if (!TriangleInverse<TKernel>.OfLower(triangle.Slice(0, count), blockDepth, lower.Slice(0, count)))
+        RowPanels<TKernel>.Pack(rowMajor, _blockDepth, _blockDepth, _blockDepth, ref _triangle[0]);
+        if (!TriangleInverse<TKernel>.OfLower(_triangle.Slice(0, count), _blockDepth, _lower.Slice(0, count)))
         {
             return false;
         }
 
-        var smallest = extents.Slice(0, blockDepth);
+        var smallest = _extents.Slice(0, _blockDepth);
         smallest.Fill(double.PositiveInfinity);
-        RowPanels<TKernel>.MeasureColumns(ref lower[0], blockDepth, blockDepth, ref smallest[0], ref extents[blockDepth]);
+        RowPanels<TKernel>.MeasureColumns(ref _lower[0], _blockDepth, _blockDepth, ref smallest[0], ref _extents[_blockDepth]);
         return NormalRange.KeepsProducts(smallest, smallestRates);
     }
 
     private bool InvertUpper(MatrixView square, ReadOnlySpan<double> smallestBelow)
     {
-        var count = blockDepth * blockDepth;
-        var rowMajor = new MatrixView(upperPanels.Values, upperPanels.Start, blockDepth);
+        var count = _blockDepth * _blockDepth;
+        var rowMajor = new MatrixView(_upperPanels.Values, _upperPanels.Start, _blockDepth);
         var keeps = true;
-        for (var row = 0; row < blockDepth; row++)
+        for (var row = 0; row < _blockDepth; row++)
         {
-            var target = rowMajor.Row(row, 0, blockDepth);
+            var target = rowMajor.Row(row, 0, _blockDepth);
             var jumps = target[(row + 1)..];
             target[..(row + 1)].Clear();
-            VectorLoops.Divide(square.Row(row, row + 1, jumps.Length), pivots[row], jumps);
-            keeps &= NormalRange.Extent(square.Row(row, row + 1, jumps.Length)).Smallest / pivots[row] >= NormalRange.Smallest;
+            VectorLoops.Divide(square.Row(row, row + 1, jumps.Length), _pivots[row], jumps);
+            keeps &= NormalRange.Extent(square.Row(row, row + 1, jumps.Length)).Smallest / _pivots[row] >= NormalRange.Smallest;
         }
 
-        RowPanels<TKernel>.Pack(rowMajor, blockDepth, blockDepth, blockDepth, ref triangle[0]);
+        RowPanels<TKernel>.Pack(rowMajor, _blockDepth, _blockDepth, _blockDepth, ref _triangle[0]);
         if (!keeps || !TriangleInverse<TKernel>.OfUpper(
-            triangle.Slice(0, count), blockDepth, upper.Slice(0, count), upperPanels.Slice(0, blockDepth * TKernel.Width)))
+            _triangle.Slice(0, count), _blockDepth, _upper.Slice(0, count), _upperPanels.Slice(0, _blockDepth * TKernel.Width)))
         {
             return false;
         }
 
-        rowMajor = new MatrixView(triangle.Values, triangle.Start, blockDepth);
-        RowPanels<TKernel>.Unpack(ref upper[0], blockDepth, rowMajor, blockDepth, blockDepth);
-        ColumnPanels<TKernel>.Pack(rowMajor, blockDepth, blockDepth, blockDepth, ref upperPanels[0]);
-        ColumnPanels<TKernel>.MeasureRows(ref upperPanels[0], blockDepth, blockDepth, ref extents[blockDepth], ref extents[0]);
-        return NormalRange.KeepsProducts(smallestBelow, extents.Slice(0, blockDepth));
+        rowMajor = new MatrixView(_triangle.Values, _triangle.Start, _blockDepth);
+        RowPanels<TKernel>.Unpack(ref _upper[0], _blockDepth, rowMajor, _blockDepth, _blockDepth);
+        ColumnPanels<TKernel>.Pack(rowMajor, _blockDepth, _blockDepth, _blockDepth, ref _upperPanels[0]);
+        ColumnPanels<TKernel>.MeasureRows(ref _upperPanels[0], _blockDepth, _blockDepth, ref _extents[_blockDepth], ref _extents[0]);
+        return NormalRange.KeepsProducts(smallestBelow, _extents.Slice(0, _blockDepth));
     }
 }

@@ -11,16 +11,16 @@ internal sealed class PooledBuffer : IDisposable
 {
     private const int DoublesPerLine = 8;
 
-    private double[]? values;
+    private double[]? _values;
 
     private PooledBuffer(double[] values, int start)
     {
-        this.values = values;
+        _values = values;
         Start = start;
     }
 
     /// <summary>The rented array.</summary>
-    internal double[] Values => values ?? throw new ObjectDisposedException(nameof(PooledBuffer));
+    internal double[] Values => _values ?? throw new ObjectDisposedException(nameof(PooledBuffer));
 
     /// <summary>Index of the first number of the buffer inside <see cref="Values"/>.</summary>
     internal int Start { get; }
@@ -43,9 +43,9 @@ internal sealed class PooledBuffer : IDisposable
     /// <summary>Gives the array back to the pool.</summary>
     public void Dispose()
     {
-        if (values is { } rented)
+        if (_values is { } rented)
         {
-            values = null;
+            _values = null;
             ArrayPool<double>.Shared.Return(rented);
         }
     }

@@ -40,21 +40,21 @@ internal sealed class WorkSharing(int threads, CancellationToken cancellation)
 
     private sealed class Round(int count, Action<int> piece, CancellationToken cancellation) : IThreadPoolWorkItem
     {
-        private readonly object gate = new();
-        private ExceptionDispatchInfo? failure;
-        private int taken;
-        private int finished;
+        private readonly object _gate = new();
+        private ExceptionDispatchInfo? _failure;
+        private int _taken;
+        private int _finished;
 
         public void Execute()
         {
-            for (var index = Interlocked.Increment(ref taken) - 1; index < count; index = Interlocked.Increment(ref taken) - 1)
+            for (var index = Interlocked.Increment(ref _taken) - 1; index < count; index = Interlocked.Increment(ref _taken) - 1)
             {
                 Attempt(index);
-                if (Interlocked.Increment(ref finished) == count)
+                if (Interlocked.Increment(ref _finished) == count)
                 {
-                    lock (gate)
+                    lock (_gate)
                     {
-                        Monitor.Pulse(gate);
+                        Monitor.Pulse(_gate);
                     }
                 }
             }
@@ -62,20 +62,20 @@ internal sealed class WorkSharing(int threads, CancellationToken cancellation)
 
         internal void WaitForHelpers()
         {
-            lock (gate)
+            lock (_gate)
             {
-                while (Volatile.Read(ref finished) < count)
+                while (Volatile.Read(ref _finished) < count)
                 {
-                    Monitor.Wait(gate);
+                    Monitor.Wait(_gate);
                 }
             }
 
-            failure?.Throw();
+            _failure?.Throw();
         }
 
         private void Attempt(int index)
         {
-            if (cancellation.IsCancellationRequested || failure is not null)
+            if (cancellation.IsCancellationRequested || _failure is not null)
             {
                 return;
             }
@@ -92,7 +92,7 @@ internal sealed class WorkSharing(int threads, CancellationToken cancellation)
 
         private bool Keep(Exception exception)
         {
-            failure = ExceptionDispatchInfo.Capture(exception);
+            _failure = ExceptionDispatchInfo.Capture(exception);
             return true;
         }
     }

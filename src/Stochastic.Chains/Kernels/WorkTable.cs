@@ -9,11 +9,11 @@ internal sealed class WorkTable : IDisposable
     private const int DoublesPerLine = 8;
     private const int DoublesPerPage = 512;
 
-    private readonly PooledBuffer buffer;
+    private readonly PooledBuffer _buffer;
 
     private WorkTable(PooledBuffer buffer, int stride)
     {
-        this.buffer = buffer;
+        _buffer = buffer;
         View = new MatrixView(buffer.Values, buffer.Start, stride);
     }
 
@@ -35,5 +35,5 @@ internal sealed class WorkTable : IDisposable
     }
 
     /// <summary>Gives the memory back to the pool.</summary>
-    public void Dispose() => buffer.Dispose();
+    public void Dispose() => _buffer.Dispose();
 }

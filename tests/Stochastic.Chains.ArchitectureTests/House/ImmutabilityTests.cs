@@ -27,7 +27,7 @@ public class ImmutabilityTests
     public void No_static_field_can_change_or_holds_what_can_change()
     {
         var fields = PublicSurface.Library.GetTypes()
-            .Where(type => !type.FullName!.Contains('<', StringComparison.Ordinal))
+            .Where(type => !type.FullName!.Contains('<', StringComparison.Ordinal) && !IsOfCoverage(type))
             .SelectMany(type => type.GetFields(PublicSurface.Everything))
             .Where(field => field.IsStatic && !field.Name.StartsWith("<>", StringComparison.Ordinal) && !field.Name.StartsWith("CS$", StringComparison.Ordinal))
             .ToList();
@@ -35,6 +35,9 @@ public class ImmutabilityTests
         fields.Count.Should().BeGreaterThan(FewestStaticFields);
         fields.Where(field => !IsFixed(field)).Select(field => $"{field.DeclaringType!.FullName}.{field.Name}: {field.FieldType}").Should().BeEmpty();
     }
+
+    /// <summary>Measuring coverage plants a counter of its own into the library.</summary>
+    private static bool IsOfCoverage(Type type) => type.FullName!.StartsWith("Coverlet.", StringComparison.Ordinal);
 
     [Fact]
     public void The_check_of_static_fields_finds_what_it_is_for()
