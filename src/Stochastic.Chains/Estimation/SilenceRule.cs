@@ -10,7 +10,9 @@ namespace Stochastic.Chains;
 /// <remarks>
 /// The rule counts one move from the last state seen to the named state, and nothing after it. It spares items last seen in the named
 /// state or in one of <see cref="LogOptions{TState}.FinalStates"/>. Choose a span clearly longer than the usual time between two scans:
-/// the share taken as lost depends on it directly (common practice, no source).
+/// the share taken as lost depends on it directly (common practice, no source). Where periods are filled, a silent item counts as
+/// staying where it was last seen until the span has passed, and an item that fell silent within the last such span of the log is not
+/// known to be gone: staying is counted somewhat too often, and losses somewhat too seldom.
 /// </remarks>
 /// <example>
 /// <code>

@@ -1,5 +1,3 @@
-using Stochastic.Chains.Internal;
-
 namespace Stochastic.Chains;
 
 /// <summary>Lets only proved results through, by their absolute error.</summary>
@@ -16,14 +14,7 @@ public static class AbsoluteAccuracy
         where TResult : ICertified
     {
         ArgumentNullException.ThrowIfNull(result);
-        if (!(absoluteError > 0))
-        {
-            throw new ArgumentOutOfRangeException(nameof(absoluteError), absoluteError, Messages.RequiredErrorOutOfRange);
-        }
-
-        var certificate = result.Certificate;
-        return certificate.IsProof && certificate.AbsoluteErrorBound <= absoluteError
-            ? result
-            : throw new AccuracyException(Messages.NotProved("absolute", absoluteError, certificate.AbsoluteErrorBound, certificate.IsProof, certificate.ToString()), certificate);
+        RequiredAccuracy.Check(result.Certificate, "absolute", result.Certificate.AbsoluteErrorBound, absoluteError);
+        return result;
     }
 }

@@ -1,5 +1,3 @@
-using Stochastic.Chains.Internal;
-
 namespace Stochastic.Chains;
 
 /// <summary>Lets only proved results through, by their relative error.</summary>
@@ -16,14 +14,7 @@ public static class RelativeAccuracy
         where TResult : ICertified
     {
         ArgumentNullException.ThrowIfNull(result);
-        if (!(relativeError > 0))
-        {
-            throw new ArgumentOutOfRangeException(nameof(relativeError), relativeError, Messages.RequiredErrorOutOfRange);
-        }
-
-        var certificate = result.Certificate;
-        return certificate.IsProof && certificate.RelativeErrorBound <= relativeError
-            ? result
-            : throw new AccuracyException(Messages.NotProved("relative", relativeError, certificate.RelativeErrorBound, certificate.IsProof, certificate.ToString()), certificate);
+        RequiredAccuracy.Check(result.Certificate, "relative", result.Certificate.RelativeErrorBound, relativeError);
+        return result;
     }
 }
