@@ -6,21 +6,24 @@ namespace Stochastic.Chains.Kernels;
 /// </summary>
 internal sealed class TripletList
 {
-    private const int BlockLength = 1 << 16;
+    private const int FirstLength = 1 << 8;
+    private const int LargestLength = 1 << 16;
 
     private readonly List<Block> _blocks = [];
-    private int _inLast = BlockLength;
+    private int _inLast;
 
-    internal long Count => _blocks.Count == 0 ? 0 : ((long)(_blocks.Count - 1) * BlockLength) + _inLast;
+    internal long Count { get; private set; }
 
     internal void Add(int row, int column, double value)
     {
-        if (_inLast == BlockLength)
+        if (_blocks.Count == 0 || _inLast == _blocks[^1].Length)
         {
-            _blocks.Add(new Block(new int[BlockLength], new int[BlockLength], new double[BlockLength]));
+            var length = _blocks.Count == 0 ? FirstLength : Math.Min(2 * _blocks[^1].Length, LargestLength);
+            _blocks.Add(new Block(new int[length], new int[length], new double[length]));
             _inLast = 0;
         }
 
+        Count++;
         var block = _blocks[^1];
         block.Rows[_inLast] = row;
         block.Columns[_inLast] = column;
@@ -51,7 +54,7 @@ internal sealed class TripletList
         }
 
         _blocks.Clear();
-        _inLast = BlockLength;
+        Count = 0;
         var rows = new CompressedRows(starts, columns, values);
         for (var row = 0; row < rowCount; row++)
         {
@@ -97,7 +100,10 @@ internal sealed class TripletList
         return starts;
     }
 
-    private int LengthOf(int block) => block == _blocks.Count - 1 ? _inLast : BlockLength;
+    private int LengthOf(int block) => block == _blocks.Count - 1 ? _inLast : _blocks[block].Length;
 
-    private readonly record struct Block(int[] Rows, int[] Columns, double[] Values);
+    private readonly record struct Block(int[] Rows, int[] Columns, double[] Values)
+    {
+        internal int Length => Rows.Length;
+    }
 }

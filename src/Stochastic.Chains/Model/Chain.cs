@@ -119,10 +119,21 @@ public sealed class Chain<TState>
     /// <summary>A short account of the chain, the same in every culture; small chains show their probabilities.</summary>
     public override string ToString() => ChainText.Write(this);
 
-    /// <summary>A fact computed from this chain, made once and kept with it.</summary>
+    /// <summary>A fact computed from this chain, made once and kept with it; a failure is not kept.</summary>
     internal TFact Derive<TFact>(Func<Chain<TState>, TFact> compute)
-        where TFact : class =>
-        (TFact)_derived.GetOrAdd(typeof(TFact), static (_, argument) => new Lazy<object>(() => argument.compute(argument.chain), LazyThreadSafetyMode.PublicationOnly), (compute, chain: this)).Value;
+        where TFact : class
+    {
+        var fact = _derived.GetOrAdd(typeof(TFact), static (_, argument) => new Lazy<object>(() => argument.compute(argument.chain)), (compute, chain: this));
+        try
+        {
+            return (TFact)fact.Value;
+        }
+        catch
+        {
+            _derived.TryRemove(KeyValuePair.Create(typeof(TFact), fact));
+            throw;
+        }
+    }
 
     private List<Transition<TState>> RowTransitions(int row) =>
         RowEntries(row).ConvertAll(entry => new Transition<TState>(States[row], States[entry.Column], entry.Probability));

@@ -41,28 +41,32 @@ internal static class StationarySolve<TState>
             throw new ArgumentException(Messages.WrongLength(method, raw.Length, members.Length), nameof(vector));
         }
 
+        var isProved = vector.ProvedBasis != ErrorBasis.None;
         for (var k = 0; k < raw.Length; k++)
         {
             if (!(raw[k] > 0) || !double.IsFinite(raw[k]))
             {
-                throw Refuse(chain.States[members[k]], method, raw[k]);
+                throw Refuse(chain.States[members[k]], method, raw[k], isProved);
             }
         }
 
-        var sum = vector.ProvedBasis == ErrorBasis.None ? CompensatedSum.Of(raw) : 1;
+        var sum = isProved ? 1 : CompensatedSum.Of(raw);
         var shares = new double[raw.Length];
         for (var k = 0; k < shares.Length; k++)
         {
             shares[k] = raw[k] / sum;
             if (!double.IsNormal(shares[k]))
             {
-                throw Refuse(chain.States[members[k]], method, raw[k]);
+                throw Refuse(chain.States[members[k]], method, raw[k], isProved);
             }
         }
 
         return shares;
     }
 
-    private static NumericalRangeException Refuse(TState state, string method, double value) => new(
-        value >= 0 && double.IsFinite(value) ? Messages.ShareTooSmall(state) : Messages.NotPositive(method, state, value), Text.Label(state));
+    private static NumericalRangeException Refuse(TState state, string method, double value, bool isProved) => new(
+        (value > 0 && double.IsFinite(value)) || (value == 0 && isProved)
+            ? Messages.ShareTooSmall(state)
+            : Messages.NotPositive(method, state, value),
+        Text.Label(state));
 }

@@ -113,7 +113,8 @@ public class StationaryRefusalTests
     [InlineData(double.NaN)]
     public void An_entry_that_is_not_positive_is_refused_not_clipped(double entry)
     {
-        Pump.Invoking(chain => chain.Stationary(new Fixed([10, 4, entry]))).Should().Throw<NumericalRangeException>().Which.State.Should().Be("failed");
+        Pump.Invoking(chain => chain.Stationary(new Fixed([10, 4, entry]))).Should().Throw<NumericalRangeException>()
+            .WithMessage("The fixed returned * for 'failed', whose long-run share is certainly positive*").Which.State.Should().Be("failed");
     }
 
     [Fact]
