@@ -34,6 +34,9 @@ internal sealed class StateFlows<TRows>
         }
     }
 
+    /// <summary>The sum of the off-diagonal rates of a state of the class, rounded to a double.</summary>
+    internal double Outflow(int position) => _outHigh[position];
+
     /// <summary>
     /// The imbalances of the first states for weights high + low, those that are nothing but rounding set to zero, and upper bounds of
     /// their absolute values. The weights are scaled so that no flow that matters falls below 2⁻⁹⁰⁰.
