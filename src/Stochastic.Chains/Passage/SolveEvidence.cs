@@ -1,3 +1,5 @@
+using Stochastic.Chains.Kernels;
+
 namespace Stochastic.Chains.Passage;
 
 /// <summary>Gathers the evidence of the systems behind one answer into its certificate.</summary>
@@ -5,6 +7,7 @@ internal sealed class SolveEvidence(SolveOptions options)
 {
     private double _residual;
     private double _bound;
+    private double _absoluteBound;
     private ErrorBasis _basis = ErrorBasis.SubtractionFree;
     private bool _hasSolved;
 
@@ -16,6 +19,7 @@ internal sealed class SolveEvidence(SolveOptions options)
             (_bound, _basis) = (solution.RelativeErrorBound, solution.Basis);
         }
 
+        _absoluteBound = Math.Max(_absoluteBound, AbsoluteBound.From(solution.RelativeErrorBound, solution.Values.Max()));
         _hasSolved = true;
         if (options.CertificateLevel >= CertificateLevel.Residual)
         {
@@ -46,6 +50,7 @@ internal sealed class SolveEvidence(SolveOptions options)
             Reason = "Direct and free of subtraction: rare ends and long times keep their digits.",
             Residual = options.CertificateLevel >= CertificateLevel.Residual ? _residual : double.PositiveInfinity,
             RelativeErrorBound = isProof ? _bound : double.PositiveInfinity,
+            AbsoluteErrorBound = isProof ? _absoluteBound : double.PositiveInfinity,
             Basis = isProof ? _basis : ErrorBasis.None,
             IsProof = isProof,
         };

@@ -26,7 +26,7 @@ internal static class StationaryCertificate
             Reason = $"{choice} {vector.Reason}",
             Residual = level >= CertificateLevel.Residual ? FlowResidual.Of(problem, shares) : double.PositiveInfinity,
             RelativeErrorBound = relative,
-            AbsoluteErrorBound = relative * shares.Max(),
+            AbsoluteErrorBound = basis == ErrorBasis.None ? double.PositiveInfinity : Math.Min(1, AbsoluteBound.From(relative, shares.Max())),
             Basis = basis,
             IsProof = basis != ErrorBasis.None,
             Iterations = vector.Iterations,

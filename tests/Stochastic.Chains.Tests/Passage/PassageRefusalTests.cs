@@ -29,6 +29,7 @@ public class PassageRefusalTests
         var times = Pool.TimeToAny(["lost", "scrapped", "lost"]);
 
         times.Targets.Should().Equal("lost", "scrapped");
+        times.Require(absoluteError: 1e-14).Certificate.AbsoluteErrorBound.Should().BeGreaterThan(times.Certificate.RelativeErrorBound);
         times.Mean("clean").Should().BeApproximately(1.9 / 0.28, 10 * Tolerances.SubtractionFree(4));
         times.Certificate.RelativeErrorBound.Should().BeLessThanOrEqualTo(Tolerances.FourRoundings);
     }
