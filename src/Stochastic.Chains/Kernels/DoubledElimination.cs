@@ -14,6 +14,12 @@ namespace Stochastic.Chains.Kernels;
 /// </remarks>
 internal static class DoubledElimination
 {
+    /// <summary>The largest system for which the elimination is repeated for a proof.</summary>
+    internal const int MostStates = 500;
+
+    /// <summary>Four units of rounding: a bound as good as this is not worth repeating an elimination for.</summary>
+    internal const double GoodEnough = 4 * UnitRoundoff;
+
     private const double UnitRoundoff = 1.1102230246251565e-16;
     private const double SmallestProduct = 1.1830521861667747e-271;
     private const double LargestNumber = 1 / SmallestProduct;

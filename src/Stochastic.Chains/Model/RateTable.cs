@@ -10,6 +10,8 @@ namespace Stochastic.Chains;
 /// <param name="columns">The number of columns: those of the rows, then exits.</param>
 internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] columnOf, int columns)
 {
+    private const int DoubledBytes = 32;
+
     internal int Rows => rows.Length;
 
     internal int Columns => columns;
@@ -58,6 +60,21 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
                 }
             }
         }
+    }
+
+    /// <summary>Eliminates the first states in twice the working precision.</summary>
+    /// <exception cref="MemoryLimitException">The table is too large.</exception>
+    internal GeneralReduction<ScaledDoubleDouble> ReduceDoubled(int pivots, SolveOptions options)
+    {
+        options.RequireMemory(Rows, DoubledBytes * (long)Rows * Columns);
+        var table = ToArray<ScaledDoubleDouble>(rate => rate);
+        var reduction = new GeneralReduction<ScaledDoubleDouble>(table, Rows, Columns, pivots);
+        if (!DoubledElimination.TryEliminate(table, Rows, Columns, reduction.Sums, options.CancellationToken))
+        {
+            reduction.Eliminate(options.Report("elimination"), options.CancellationToken);
+        }
+
+        return reduction;
     }
 
     /// <summary>Writes the rates into a new table of another arithmetic.</summary>

@@ -10,10 +10,6 @@ namespace Stochastic.Chains.Passage;
 internal sealed class ExitSystem<TState> : IDisposable
     where TState : notnull
 {
-    private const int LargestDoubled = 500;
-    private const double TightBound = 4.4408920985006262e-16;
-    private const int DoubledBytes = 32;
-
     private readonly Chain<TState> _chain;
     private readonly int[] _members;
     private readonly int[] _exitOf;
@@ -111,7 +107,7 @@ internal sealed class ExitSystem<TState> : IDisposable
     {
         var mustProve = _options.CertificateLevel == CertificateLevel.Proof;
         var fast = _staysInRange ? SolveFast(Array.ConvertAll(given, value => value.ToDouble()), elsewhere, mustProve) : null;
-        return fast is not null && (!mustProve || fast.RelativeErrorBound <= TightBound || _members.Length > LargestDoubled)
+        return fast is not null && (!mustProve || fast.RelativeErrorBound <= DoubledElimination.GoodEnough || _members.Length > DoubledElimination.MostStates)
             ? fast
             : SolveDoubled(given, outOfRange);
     }
@@ -148,7 +144,7 @@ internal sealed class ExitSystem<TState> : IDisposable
 
     private ExitSolution SolveDoubled(ScaledDoubleDouble[] given, Func<object, long, string> outOfRange)
     {
-        _doubled ??= ReduceDoubled();
+        _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
         ScaledDoubleDouble[] solution = [.. given];
         _doubled.SolveRight(solution);
         var values = Array.ConvertAll(solution, value => value.ToDouble());
@@ -162,19 +158,6 @@ internal sealed class ExitSystem<TState> : IDisposable
         }
 
         return new ExitSolution(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
-    }
-
-    private GeneralReduction<ScaledDoubleDouble> ReduceDoubled()
-    {
-        _options.RequireMemory(_rates.Rows, DoubledBytes * (long)_rates.Rows * _rates.Columns);
-        var table = _rates.ToArray<ScaledDoubleDouble>(rate => rate);
-        var reduction = new GeneralReduction<ScaledDoubleDouble>(table, _rates.Rows, _rates.Columns, _rates.Rows);
-        if (!DoubledElimination.TryEliminate(table, _rates.Rows, _rates.Columns, reduction.Sums, _options.CancellationToken))
-        {
-            reduction.Eliminate(_options.Report("elimination"), _options.CancellationToken);
-        }
-
-        return reduction;
     }
 
     private readonly struct Refinement(

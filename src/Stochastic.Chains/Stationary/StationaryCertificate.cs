@@ -36,7 +36,7 @@ internal static class StationaryCertificate
     /// <summary>What the method proves, or what balancing the flows proves where that is better and the method's proof is not tight.</summary>
     private static (ErrorBasis Basis, double Relative) BestBound(StationaryProblem problem, StationaryVector vector, double[] shares)
     {
-        if (vector.ProvedBound <= StationaryElimination.TightBound)
+        if (vector.ProvedBound <= DoubledElimination.GoodEnough)
         {
             return (vector.ProvedBasis, vector.ProvedBound);
         }

@@ -5,14 +5,7 @@ namespace Stochastic.Chains.Stationary;
 /// <summary>The ways to eliminate, from the fastest to the most careful; each is left for the next where it cannot do what is asked.</summary>
 internal static class StationaryElimination
 {
-    /// <summary>The largest class for which the elimination is repeated in twice the precision for a proof.</summary>
-    internal const int LargestDoubled = 500;
-
-    /// <summary>Four units of rounding: a bound as good as this is not worth improving.</summary>
-    internal const double TightBound = 4.4408920985006262e-16;
-
     private const int WideBytes = 16;
-    private const int DoubledBytes = 32;
     private const double SmallReference = 1.0 / 16;
 
     internal static StationaryVector Solve(StationaryProblem problem, InstructionSet instructions)
@@ -20,7 +13,7 @@ internal static class StationaryElimination
         var mustProve = problem.Options.CertificateLevel == CertificateLevel.Proof;
         var order = problem.Members.ToArray();
         var fast = SolveFast(problem, order, instructions, mustProve);
-        if (fast is not null && (!mustProve || fast.ProvedBound <= TightBound))
+        if (fast is not null && (!mustProve || fast.ProvedBound <= DoubledElimination.GoodEnough))
         {
             return fast;
         }
@@ -33,12 +26,12 @@ internal static class StationaryElimination
             fast = retried?.ProvedBound < fast.ProvedBound ? retried : fast;
         }
 
-        if (fast?.ProvedBound <= TightBound)
+        if (fast?.ProvedBound <= DoubledElimination.GoodEnough)
         {
             return fast;
         }
 
-        return mustProve && problem.StateCount <= LargestDoubled ? SolveDoubled(problem) : fast ?? SolveWide(problem);
+        return mustProve && problem.StateCount <= DoubledElimination.MostStates ? SolveDoubled(problem) : fast ?? SolveWide(problem);
     }
 
     /// <summary>Elimination in doubles, refined where a proof is asked for; null where a product could leave their range.</summary>
@@ -103,14 +96,7 @@ internal static class StationaryElimination
     private static StationaryVector SolveDoubled(StationaryProblem problem)
     {
         var size = problem.StateCount;
-        problem.Options.RequireMemory(size, DoubledBytes * (long)size * size);
-        var table = problem.Rates.ToArray<ScaledDoubleDouble>(rate => rate);
-        var reduction = new GeneralReduction<ScaledDoubleDouble>(table, size, size, size - 1);
-        if (!DoubledElimination.TryEliminate(table, size, size, reduction.Sums, problem.Options.CancellationToken))
-        {
-            reduction.Eliminate(problem.Options.Report("elimination"), problem.Options.CancellationToken);
-        }
-
+        var reduction = problem.Rates.ReduceDoubled(size - 1, problem.Options);
         var weights = new ScaledDoubleDouble[size];
         weights[^1] = ScaledDoubleDouble.One;
         reduction.ExtendLeft(weights);
