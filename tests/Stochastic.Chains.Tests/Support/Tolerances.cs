@@ -22,6 +22,13 @@ internal static class Tolerances
     internal static double SubtractionFree(int states) => 4 * states * UnitRoundoff;
 
     /// <summary>
+    /// What long-run shares may change by when the probabilities of a published case are rounded to doubles, relative to each: at most two
+    /// roundings of each (a rate, and its quotient by the rate of the steps), and a share of n states is a quotient of two sums of products of n − 1 of
+    /// them (Markov chain tree theorem; O'Cinneide 1993), with a little for second-order terms.
+    /// </summary>
+    internal static double RoundedInput(int states) => 4.01 * states * UnitRoundoff;
+
+    /// <summary>
     /// The relative error of each entry after so many steps, each adding up at most so many moves into a state: one rounding for each
     /// addition, and eight more for the product, the stay and the division of the row by its sum.
     /// </summary>

@@ -1,0 +1,48 @@
+using Stochastic.Chains.Tests.Support;
+
+namespace Stochastic.Chains.Tests.Stationary;
+
+/// <summary>Certificates of chains beyond the reach of exact fractions, just over the edges of blocks, against twice the digits.</summary>
+public class LargeCertificateTests
+{
+    private static readonly string[] Families =
+        ["random dense", "random sparse", "periodic", "nearly decomposable", "nested decomposable", "graded", "rare target", "reflecting path"];
+
+    public static TheoryData<string, int> FamiliesAndSizes
+    {
+        get
+        {
+            var data = new TheoryData<string, int>();
+            foreach (var family in Families)
+            {
+                data.Add(family, 129);
+                data.Add(family, 257);
+            }
+
+            return data;
+        }
+    }
+
+    [Theory]
+    [MemberData(nameof(FamiliesAndSizes))]
+    public void No_method_is_off_by_more_than_its_proof_and_the_proof_is_useful(string family, int size)
+    {
+        var sample = ChainFamilies.Named(family).Create(size, seed: (ulong)size);
+        var exact = new DoubleDoubleChain(sample.Matrix).Stationary();
+        var chain = sample.ToChain();
+        foreach (var method in StationaryMethods.All)
+        {
+            if (!method.TryAnswer(chain, out var shares))
+            {
+                method.Should().NotBeOfType<EliminationMethod>("it cannot lose a sign");
+                continue;
+            }
+
+            var error = shares.ToArray().Zip(exact, (computed, truth) => truth.RelativeDifference(computed)).Max();
+            var bound = shares.Certificate.RelativeErrorBound;
+            error.Should().BeLessThanOrEqualTo(bound, "{0} by {1}", sample, method.Name);
+            bound.Should().BeLessThanOrEqualTo(
+                method is EliminationMethod ? Tolerances.FourRoundings : UsefulBound.For(family, error), "{0} by {1}, off by {2}", sample, method.Name, error);
+        }
+    }
+}
