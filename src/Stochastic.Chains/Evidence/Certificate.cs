@@ -16,6 +16,8 @@ namespace Stochastic.Chains;
 /// </example>
 public sealed record Certificate
 {
+    private readonly ErrorBasis? _absoluteBasis;
+
     /// <summary>Gets the method that computed the result, by its published name.</summary>
     public required string Method { get; init; }
 
@@ -34,8 +36,15 @@ public sealed record Certificate
     /// <summary>Gets a bound on the absolute error of every entry; +∞ when there is none.</summary>
     public double AbsoluteErrorBound { get; init; } = double.PositiveInfinity;
 
-    /// <summary>Gets what the bounds rest on.</summary>
+    /// <summary>Gets what the bounds rest on: that on relative errors where there is one, else that on absolute errors.</summary>
     public ErrorBasis Basis { get; init; } = ErrorBasis.None;
+
+    /// <summary>Gets what the bound on absolute errors rests on: the same as <see cref="Basis"/>, unless something else proves more.</summary>
+    public ErrorBasis AbsoluteBasis
+    {
+        get => _absoluteBasis ?? Basis;
+        init => _absoluteBasis = value;
+    }
 
     /// <summary>Gets whether the bounds are proved, rounding of IEEE-754 double arithmetic included.</summary>
     public bool IsProof { get; init; }
@@ -44,7 +53,15 @@ public sealed record Certificate
     public long Iterations { get; init; }
 
     /// <summary>One line with the method, the residual and the bound, the same in every culture.</summary>
-    public override string ToString() => string.Create(
-        CultureInfo.InvariantCulture,
-        $"{Method}; residual {Residual:G3}; relative error {(double.IsFinite(RelativeErrorBound) ? "at most" : "bound")} {RelativeErrorBound:G3} ({(IsProof ? "proved" : "not proved")}: {Basis})");
+    public override string ToString()
+    {
+        var (words, bound) = WorstError;
+        return string.Create(
+            CultureInfo.InvariantCulture, $"{Method}; residual {Residual:G3}; {words} {bound:G3} ({(IsProof ? "proved" : "not proved")}: {Basis})");
+    }
+
+    /// <summary>The bound on relative errors, or where there is none, that on absolute ones.</summary>
+    private (string Words, double Bound) WorstError => double.IsFinite(RelativeErrorBound) ? ("relative error at most", RelativeErrorBound)
+        : double.IsFinite(AbsoluteErrorBound) ? ("absolute error at most", AbsoluteErrorBound)
+        : ("relative error bound", RelativeErrorBound);
 }

@@ -35,7 +35,4 @@ public enum ErrorBasis
 
     /// <summary>The sum of what is left unbalanced, over how much closer a step brings any two distributions. A proof for the sum of all errors.</summary>
     Contraction,
-
-    /// <summary>An estimate from the condition number of the equations. Not a proof.</summary>
-    ConditionEstimate,
 }

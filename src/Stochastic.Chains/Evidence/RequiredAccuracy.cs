@@ -19,7 +19,7 @@ internal static class RequiredAccuracy
 
         if (!certificate.IsProof || bound > required)
         {
-            throw new AccuracyException(Messages.NotProved(kind, required, bound, certificate.IsProof, certificate.ToString()), certificate);
+            throw new AccuracyException(Messages.NotProved(kind, required, bound, certificate.IsProof && double.IsFinite(bound), certificate.ToString()), certificate);
         }
     }
 }

@@ -1,6 +1,6 @@
 namespace Stochastic.Chains.Kernels;
 
-/// <summary>A bound in the 1-norm on the error of any positive vector as the stationary distribution of one recurrent class.</summary>
+/// <summary>How many times its residual the error of a stationary vector can be: the longest mean time to a reference state.</summary>
 /// <remarks>
 /// Let A be I − P without a reference state k, h = A⁻¹ 1 the mean times to k (h_k = 0), G the matrix A⁻¹ bordered by zeros, and r = x (I − P)
 /// over all states for a vector x of sum one. Then x − π = r G − (r h) π. As r sums to zero it is a mixture of differences e_i − e_l of total
@@ -9,14 +9,12 @@ namespace Stochastic.Chains.Kernels;
 /// </remarks>
 internal static class MonotoneResidual
 {
-    /// <summary>The bound on Σ |x_i − π_i|, and so on each entry; +∞ when the times do not pass the test.</summary>
+    /// <summary>An upper bound of the longest mean time, in steps; +∞ when the times do not pass the test.</summary>
     /// <param name="rows">The rates of the whole chain; from the states of the class they lead to states of the class only.</param>
     /// <param name="states">The states of the class.</param>
-    /// <param name="values">The vector, by state.</param>
     /// <param name="reference">The reference state.</param>
     /// <param name="times">The mean times to the reference state by state, zero in it and outside the class; they need not be accurate.</param>
-    internal static double AbsoluteErrorBound<TRows>(
-        TRows rows, ReadOnlySpan<int> states, ReadOnlySpan<double> values, int reference, ReadOnlySpan<double> times)
+    internal static double Amplification<TRows>(TRows rows, ReadOnlySpan<int> states, int reference, ReadOnlySpan<double> times)
         where TRows : struct, IRateRows
     {
         var zeros = new double[times.Length];
@@ -39,8 +37,6 @@ internal static class MonotoneResidual
             defect = Math.Max(defect, Math.BitIncrement(residual + error));
         }
 
-        return longest > 0 && defect < 1
-            ? Contraction.AbsoluteErrorBound(rows, states, values, Upward.Divide(longest, Upward.LowerDifference(1, defect)))
-            : double.PositiveInfinity;
+        return longest > 0 && defect < 1 ? Upward.Divide(longest, Upward.LowerDifference(1, defect)) : double.PositiveInfinity;
     }
 }

@@ -43,12 +43,13 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
     /// <summary>Writes the rates into a table of doubles.</summary>
     internal void CopyTo(MatrixView table)
     {
+        var isWhole = IsWhole();
         for (var row = 0; row < rows.Length; row++)
         {
             var target = table.Row(row, 0, columns);
-            if (rows.Length == matrix.Size && matrix.TryCopyDenseRow(row, target))
+            if (isWhole && matrix.TryCopyDenseRow(row, target))
             {
-                continue; // all states in their own order, and the diagonal is never read
+                continue; // the diagonal comes along, but is never read
             }
 
             target.Clear();
@@ -94,5 +95,19 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
         }
 
         return table;
+    }
+
+    /// <summary>Whether the rows are all states of the matrix in their own order.</summary>
+    private bool IsWhole()
+    {
+        for (var row = 0; row < rows.Length; row++)
+        {
+            if (rows[row] != row)
+            {
+                return false;
+            }
+        }
+
+        return rows.Length == matrix.Size;
     }
 }

@@ -44,13 +44,7 @@ internal static class FlowResidual
             where TRows : struct, IRateRows
         {
             var members = problem.Members;
-            var values = new double[problem.Matrix.Size];
-            for (var k = 0; k < shares.Length; k++)
-            {
-                values[members[k]] = shares[k];
-            }
-
-            if (!ScaledWeights.TryScale(members, values, ScaledExponent, out var weights, out _))
+            if (!ScaledWeights.TryScale(members, problem.Spread(shares), ScaledExponent, out var weights, out _))
             {
                 return double.NaN;
             }

@@ -60,6 +60,18 @@ public sealed class StationaryProblem
     /// <summary>The entries of the class from a vector over all states of the chain.</summary>
     internal double[] Select(double[] values) => Array.ConvertAll(_members, member => values[member]);
 
+    /// <summary>A vector over the class as one over all states of the chain, zero elsewhere.</summary>
+    internal double[] Spread(ReadOnlySpan<double> values)
+    {
+        var all = new double[Matrix.Size];
+        for (var k = 0; k < values.Length; k++)
+        {
+            all[_members[k]] = values[k];
+        }
+
+        return all;
+    }
+
     /// <summary>Lists the moves out of a state to other states of the class: the data of the problem. Stays are left out.</summary>
     /// <param name="state">A state, from 0 to <see cref="StateCount"/> − 1.</param>
     /// <exception cref="ArgumentOutOfRangeException">There is no such state.</exception>

@@ -92,6 +92,7 @@ public class ImmutabilityTests
 
     private static bool IsImmutable(Type type) =>
         type.IsPrimitive || type.IsEnum || type.IsGenericParameter
+        || (Nullable.GetUnderlyingType(type) is { } underlying && IsImmutable(underlying))
         || ImmutableTypes.Contains(type) || (type.IsGenericType && ImmutableTypes.Contains(type.GetGenericTypeDefinition()))
         || (type.Assembly == PublicSurface.Library && HoldsNothingWritable(type));
 

@@ -28,7 +28,7 @@ public class NormBoundTests
             var times = Array.ConvertAll(sample.ToExact().HittingMean(reference), mean => mean!.Value.ToDouble());
             foreach (var values in new[] { trial.Rounded(), trial.WrongInBlock(1e-3) })
             {
-                var bound = MonotoneResidual.AbsoluteErrorBound(trial.Dense, trial.States, values, reference, times);
+                var bound = VectorResidual.Of(trial.Dense, trial.States, values).ErrorBound(MonotoneResidual.Amplification(trial.Dense, trial.States, reference, times));
                 Distance(trial, values).Should().BeLessThanOrEqualTo(bound, "{0}", trial);
             }
         }
@@ -41,15 +41,15 @@ public class NormBoundTests
         {
             var reference = trial.StatesByShare[^1];
             var longTimes = Enumerable.Range(0, trial.Count).Select(state => state == reference ? 0 : 20.0 * trial.Count).ToArray();
-            var shared = Contraction.SharedMass(trial.Dense, trial.States);
             foreach (var values in new[] { trial.Rounded(), trial.WrongInBlock(1e-9) })
             {
                 var distance = Distance(trial, values);
+                var residual = VectorResidual.Of(trial.Dense, trial.States, values);
                 double[] bounds =
                 [
-                    MonotoneResidual.AbsoluteErrorBound(trial.Dense, trial.States, values, reference, longTimes),
-                    Contraction.AbsoluteErrorBound(trial.Dense, trial.States, values, 1 / shared),
-                    Contraction.AbsoluteErrorBound(trial.Sparse, trial.States, values, 1 / Contraction.SharedMass(trial.Sparse, trial.States)),
+                    residual.ErrorBound(MonotoneResidual.Amplification(trial.Dense, trial.States, reference, longTimes)),
+                    residual.ErrorBound(Contraction.Amplification(trial.Dense, trial.States)),
+                    VectorResidual.Of(trial.Sparse, trial.States, values).ErrorBound(Contraction.Amplification(trial.Sparse, trial.States)),
                 ];
                 bounds.Should().OnlyContain(bound => bound >= distance && bound <= UsefulFactor * (distance + UnitRoundoff), "{0}", trial);
             }
@@ -63,8 +63,7 @@ public class NormBoundTests
     public void Times_that_prove_nothing_give_no_bound(double time)
     {
         var rows = new DenseRates([0.5, 0.25, 0.25, 0.25, 0.5, 0.25, 0.25, 0.25, 0.5], 3);
-        const double Third = 1.0 / 3;
-        MonotoneResidual.AbsoluteErrorBound(rows, [0, 1, 2], [Third, Third, Third], 2, [time, time, 0]).Should().Be(double.PositiveInfinity);
+        MonotoneResidual.Amplification(rows, [0, 1, 2], 2, [time, time, 0]).Should().Be(double.PositiveInfinity);
     }
 
     [Fact]
@@ -73,7 +72,8 @@ public class NormBoundTests
         var rows = new DenseRates([0, 1, 0, 0, 0, 1, 1, 0, 0], 3);
         const double Third = 1.0 / 3;
         Contraction.SharedMass(rows, [0, 1, 2]).Should().BeLessThanOrEqualTo(0);
-        Contraction.AbsoluteErrorBound(rows, [0, 1, 2], [Third, Third, Third], double.PositiveInfinity).Should().Be(double.PositiveInfinity);
+        Contraction.Amplification(rows, [0, 1, 2]).Should().Be(double.PositiveInfinity);
+        VectorResidual.Of(rows, [0, 1, 2], [Third, Third, Third]).ErrorBound(double.PositiveInfinity).Should().Be(double.PositiveInfinity);
     }
 
     private static double Distance(StationaryTrial trial, double[] values) =>

@@ -41,8 +41,29 @@ public class LargeCertificateTests
             var error = shares.ToArray().Zip(exact, (computed, truth) => truth.RelativeDifference(computed)).Max();
             var bound = shares.Certificate.RelativeErrorBound;
             error.Should().BeLessThanOrEqualTo(bound, "{0} by {1}", sample, method.Name);
+            shares.ToArray().Zip(exact, (computed, truth) => truth.RelativeDifference(computed) * truth.ToDouble()).Max()
+                .Should().BeLessThanOrEqualTo(shares.Certificate.AbsoluteErrorBound, "{0} by {1}", sample, method.Name);
             bound.Should().BeLessThanOrEqualTo(
                 method is EliminationMethod ? Tolerances.FourRoundings : UsefulBound.For(family, error), "{0} by {1}, off by {2}", sample, method.Name, error);
         }
+    }
+
+    /// <summary>The kept state is exchanged for one with a large share; refinement does not get anywhere with a rare one.</summary>
+    [Fact]
+    public void A_rare_last_state_does_not_keep_a_large_chain_from_being_refined()
+    {
+        const int States = 520;
+        const double Rarity = 1e-30;
+        var matrix = ChainFamilies.Named("random dense").Create(States, seed: 1).Matrix;
+        for (var from = 0; from < States - 1; from++)
+        {
+            matrix[from, from] += matrix[from, States - 1];
+            matrix[from, States - 1] = Rarity;
+        }
+
+        var shares = Chain.FromMatrix(matrix).Stationary();
+
+        shares.Certificate.Basis.Should().Be(ErrorBasis.RefinedMonotone);
+        shares.Certificate.RelativeErrorBound.Should().BeLessThanOrEqualTo(Tolerances.FourRoundings);
     }
 }

@@ -24,6 +24,7 @@ public class StationaryCertificateTests
 
             proved.Certificate.IsProof.Should().BeTrue(sample.ToString());
             proved.Certificate.RelativeErrorBound.Should().BeLessThanOrEqualTo(Tolerances.FourRoundings, sample.ToString());
+            LargestDifference(proved, exact).Should().BeLessThanOrEqualTo(proved.Certificate.AbsoluteErrorBound, sample.ToString());
             WorstError(proved, exact).Should().BeLessThanOrEqualTo(proved.Certificate.RelativeErrorBound, sample.ToString());
             WorstError(unproved, exact).Should().BeLessThanOrEqualTo(Tolerances.SubtractionFree(sample.StateCount), sample.ToString());
             checkedChains++;
@@ -45,8 +46,10 @@ public class StationaryCertificateTests
                 continue;
             }
 
-            var error = WorstError(shares, sample.ToExact().Stationary());
+            var exact = sample.ToExact().Stationary();
+            var error = WorstError(shares, exact);
             error.Should().BeLessThanOrEqualTo(shares.Certificate.RelativeErrorBound, sample.ToString());
+            LargestDifference(shares, exact).Should().BeLessThanOrEqualTo(shares.Certificate.AbsoluteErrorBound, sample.ToString());
             shares.Certificate.RelativeErrorBound.Should().BeLessThanOrEqualTo(
                 UsefulBound.For(familyName, error), "{0}, off by {1}", sample, error);
         }
@@ -73,4 +76,7 @@ public class StationaryCertificateTests
 
     private static double WorstError(StationaryDistribution<int> shares, Rational[] exact) =>
         shares.ToArray().Zip(exact, (computed, truth) => truth.RelativeDifference(computed)).Max();
+
+    private static double LargestDifference(StationaryDistribution<int> shares, Rational[] exact) =>
+        shares.ToArray().Zip(exact, (computed, truth) => Rational.Abs(Rational.FromDouble(computed) - truth).ToDouble()).Max();
 }
