@@ -25,9 +25,11 @@ internal static class RefinedStationary
     /// <param name="values">The shares by state of the chain.</param>
     /// <param name="factors">The factors of the system without the reference state.</param>
     /// <param name="solveError">A bound below 1 on the relative error of solving with a non-negative right-hand side.</param>
+    /// <param name="reach">How far the shares may be from the truth.</param>
     /// <param name="cancellation">Looked at in each step.</param>
     internal static double Refine<TRows, TFactors>(
-        TRows rows, ReadOnlySpan<int> states, Span<double> values, TFactors factors, double solveError, CancellationToken cancellation)
+        TRows rows, ReadOnlySpan<int> states, Span<double> values, TFactors factors, double solveError, RefinementReach reach,
+        CancellationToken cancellation)
         where TRows : struct, IRateRows
         where TFactors : IFactors
     {
@@ -38,7 +40,7 @@ internal static class RefinedStationary
 
         int[] order = [.. states];
         var others = order[..^1];
-        var refinement = new Refinement(others, highs);
+        var refinement = new Refinement(others, highs, reach);
         var flows = new StateFlows<TRows>(rows, states);
         Func<double[], bool> solve = numbers => factors.SolveLeft(numbers);
         Func<double> findError = () => LargestError(others, refinement, factors, solveError);

@@ -44,7 +44,7 @@ internal static class RefinedSystem
         }
 
         int[] order = [.. states];
-        var refinement = new Refinement(order, highs);
+        var refinement = new Refinement(order, highs, RefinementReach.LastDigits);
         var isTimes = given.IndexOf(0.0) < 0 && IsZeroElsewhere(states, values);
         Func<double[], bool> solve = numbers => factors.SolveRight(numbers);
         Func<double> findError = () => LargestError(order, rightHandSide, isTimes, refinement, factors, solveError);

@@ -6,15 +6,16 @@ namespace Stochastic.Chains.Kernels;
 /// </summary>
 /// <param name="states">The states whose numbers are corrected, in the order of the system.</param>
 /// <param name="highs">The solution by state of the chain; overwritten.</param>
-internal sealed class Refinement(int[] states, double[] highs)
+/// <param name="reach">How far it may be from the truth.</param>
+internal sealed class Refinement(int[] states, double[] highs, RefinementReach reach)
 {
     /// <summary>Half a unit in the last place: the rounding of the answer to a double that nothing can avoid.</summary>
     internal const double UnitRoundoff = 1.1102230246251565e-16;
 
-    private const int MostSteps = 3;
     private const double GoodEnough = UnitRoundoff / 16;
     private const double WithinReach = UnitRoundoff;
-    private const double LargestCorrection = 1.0 / 16;
+
+    private bool _isCorrected;
 
     internal double[] Highs { get; } = highs;
 
@@ -41,7 +42,7 @@ internal sealed class Refinement(int[] states, double[] highs)
     internal bool NeedsExactResiduals => states.Length <= ExactResiduals.MostStates
         && Error > WithinReach && Error <= DoubledLoops.SumError(states.Length) / UnitRoundoff;
 
-    /// <summary>Makes up to three steps.</summary>
+    /// <summary>Makes as many steps as help.</summary>
     /// <param name="findResiduals">Writes residuals and their bounds.</param>
     /// <param name="findError">The largest relative error that the bounds prove; may overwrite them.</param>
     /// <param name="solve">Solves the system in place; false when that is not possible.</param>
@@ -63,7 +64,7 @@ internal sealed class Refinement(int[] states, double[] highs)
                 (Error, BestHighs, BestLows) = (error, [.. Highs], [.. Lows]);
             }
 
-            if (Error <= GoodEnough || step == MostSteps || !solve(Residuals) || !TryCorrect())
+            if (Error <= GoodEnough || step == reach.MostSteps || !solve(Residuals) || !TryCorrect())
             {
                 return;
             }
@@ -73,10 +74,11 @@ internal sealed class Refinement(int[] states, double[] highs)
     /// <summary>False when a correction is so large that refinement cannot be contracting.</summary>
     private bool TryCorrect()
     {
+        var largest = _isCorrected ? RefinementReach.LargestCorrection : reach.LargestFirstCorrection;
         for (var k = 0; k < Residuals.Length; k++)
         {
             var state = states[k];
-            if (!(Math.Abs(Residuals[k]) <= LargestCorrection * Highs[state]))
+            if (!(Math.Abs(Residuals[k]) <= largest * Highs[state] && Highs[state] + Residuals[k] > 0))
             {
                 return false;
             }
@@ -84,6 +86,7 @@ internal sealed class Refinement(int[] states, double[] highs)
             (Highs[state], Lows[state]) = DoubleDouble.Add(Highs[state], Lows[state], Residuals[k], 0);
         }
 
+        _isCorrected = true;
         return true;
     }
 }

@@ -105,4 +105,16 @@ internal static class VectorLoops
             target[index] = Math.Max(target[index], bounds[index]);
         }
     }
+
+    /// <summary>The index of the first of the largest numbers; 0 when there is none.</summary>
+    internal static int IndexOfLargest(ReadOnlySpan<double> values)
+    {
+        var largest = 0;
+        for (var k = 1; k < values.Length; k++)
+        {
+            largest = values[k] > values[largest] ? k : largest;
+        }
+
+        return largest;
+    }
 }

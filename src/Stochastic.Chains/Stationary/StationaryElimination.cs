@@ -19,7 +19,7 @@ internal static class StationaryElimination
         }
 
         // Refinement contracts when the state that is kept has a large share.
-        if (fast is not null && LargestShare(fast) is var largest && fast.Values.Span[^1] < SmallReference * fast.Values.Span[largest])
+        if (fast is not null && VectorLoops.IndexOfLargest(fast.Values.Span) is var largest && fast.Values.Span[^1] < SmallReference * fast.Values.Span[largest])
         {
             (order[largest], order[^1]) = (order[^1], order[largest]);
             var retried = SolveFast(problem, order, instructions, mustProve: true);
@@ -41,28 +41,21 @@ internal static class StationaryElimination
     /// <param name="mustProve">Whether to refine.</param>
     private static StationaryVector? SolveFast(StationaryProblem problem, int[] order, InstructionSet instructions, bool mustProve)
     {
-        var size = order.Length;
-        var options = problem.Options;
-        using var table = WorkTable.Rent(size, size);
-        RateTable.Among(problem.Matrix, order).CopyTo(table.View);
-        var sums = new double[size - 1];
-        var shares = new double[size];
-        if (!StateReduction.Eliminate(table.View, size, size, size - 1, sums, options.Parallelism, instructions, options.CancellationToken)
-            || !ReductionSolve.Stationary(table.View, size, shares))
+        using var reduced = ReducedClass.TryReduce(problem, order, instructions);
+        var shares = new double[order.Length];
+        if (reduced?.TryFindShares(shares) is not true)
         {
             return null;
         }
 
         var values = new double[problem.Matrix.Size];
-        for (var k = 0; k < size; k++)
+        for (var k = 0; k < shares.Length; k++)
         {
             values[order[k]] = shares[k];
         }
 
-        var bound = ReductionBound.OfStationary(size);
-        var refined = mustProve
-            ? problem.Matrix.OnRates<double, Refinement>(new Refinement(order, values, new TableFactors(table.View, sums), options.CancellationToken))
-            : double.PositiveInfinity;
+        var bound = ReductionBound.OfStationary(shares.Length);
+        var refined = mustProve ? reduced.Refine(problem, values, RefinementReach.LastDigits) : double.PositiveInfinity;
         return new StationaryVector(problem.Select(values))
         {
             HasConverged = true,
@@ -108,29 +101,5 @@ internal static class StationaryElimination
             ProvedBasis = ErrorBasis.DoubledElimination,
             ProvedBound = DoubledElimination.RelativeErrorBound(size - 1, size, merges: 0),
         };
-    }
-
-    private static int LargestShare(StationaryVector vector)
-    {
-        var shares = vector.Values.Span;
-        var largest = 0;
-        for (var k = 1; k < shares.Length; k++)
-        {
-            largest = shares[k] > shares[largest] ? k : largest;
-        }
-
-        return largest;
-    }
-
-    private readonly struct Refinement(int[] order, double[] values, TableFactors factors, CancellationToken cancellation) : IRateAlgorithm<double>
-    {
-        public double Run<TRows>(TRows rows)
-            where TRows : struct, IRateRows
-        {
-            var solveError = ReductionBound.OfSystem(order.Length - 1, order.Length, merges: 0);
-            return solveError < 1
-                ? RefinedStationary.Refine(rows, order, values.AsSpan(), factors, solveError, cancellation)
-                : double.PositiveInfinity;
-        }
     }
 }

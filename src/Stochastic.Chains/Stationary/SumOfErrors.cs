@@ -44,17 +44,12 @@ internal static class SumOfErrors
             where TRows : struct, IRateRows
         {
             var order = problem.Members.ToArray();
-            var (reference, others) = (shares.AsSpan().IndexOf(shares.Max()), order.Length - 1);
+            var (reference, others) = (VectorLoops.IndexOfLargest(shares), order.Length - 1);
             (order[reference], order[^1]) = (order[^1], order[reference]);
-            using var table = WorkTable.Rent(order.Length, order.Length);
-            RateTable.Among(problem.Matrix, order).CopyTo(table.View);
-            var sums = new double[others];
-            var options = problem.Options;
             var means = new double[others];
             means.AsSpan().Fill(1);
-            if (!StateReduction.Eliminate(
-                    table.View, order.Length, order.Length, others, sums, options.Parallelism, InstructionSet.Widest, options.CancellationToken)
-                || !ReductionSolve.SolveRight(table.View, sums, others, means))
+            using var reduced = ReducedClass.TryReduce(problem, order, InstructionSet.Widest);
+            if (reduced?.Factors.SolveRight(means) is not true)
             {
                 return double.PositiveInfinity;
             }

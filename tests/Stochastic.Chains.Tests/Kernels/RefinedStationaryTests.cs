@@ -27,8 +27,8 @@ public class RefinedStationaryTests
             foreach (var start in new[] { trial.Reduced(), trial.WrongInBlock(1e-3) })
             {
                 var (dense, sparse) = (start.ToArray(), start.ToArray());
-                var bound = RefinedStationary.Refine(trial.Dense, order, dense, factors, solveError, CancellationToken.None);
-                var sparseBound = RefinedStationary.Refine(trial.Sparse, order, sparse, factors, solveError, CancellationToken.None);
+                var bound = RefinedStationary.Refine(trial.Dense, order, dense, factors, solveError, RefinementReach.LastDigits, CancellationToken.None);
+                var sparseBound = RefinedStationary.Refine(trial.Sparse, order, sparse, factors, solveError, RefinementReach.LastDigits, CancellationToken.None);
                 Check(trial, start, dense, bound);
                 Check(trial, start, sparse, sparseBound);
             }

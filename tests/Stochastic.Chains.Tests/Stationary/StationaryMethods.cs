@@ -13,6 +13,7 @@ internal static class StationaryMethods
         new PowerMethod { MaxIterations = 2000 },
         new GaussSeidelMethod { MaxIterations = 500 },
         new AggregationMethod { MaxIterations = 100 },
+        new PolishedMethod(new PowerMethod { MaxIterations = 2000 }),
         new PlainReduction(),
     ];
 
