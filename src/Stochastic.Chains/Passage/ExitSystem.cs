@@ -38,15 +38,25 @@ internal sealed class ExitSystem<TState> : IDisposable
             _table.View, _rates.Rows, _rates.Columns, _rates.Rows, _sums, options.Parallelism, InstructionSet.Widest, options.CancellationToken);
     }
 
+    /// <summary>The factors in twice the working precision, made when they are first needed.</summary>
+    private GeneralReduction<ScaledDoubleDouble> Doubled => _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
+
     /// <summary>Gives the working memory back.</summary>
     public void Dispose() => _table.Dispose();
 
+    /// <summary>A bound below 1 on the relative error of <see cref="SolveUpper"/>; +∞ when there is none.</summary>
+    internal double SolveError => ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
+
+    /// <summary>Solves A · x = given, both over the members.</summary>
+    internal WideSolution Solve(ScaledDoubleDouble[] given) => Solve(given, new double[_chain.StateCount]);
+
     /// <summary>The mean number of steps until an exit, divided by the steps per unit of time.</summary>
-    internal ExitSolution MeanTimes()
-    {
-        var given = Array.ConvertAll(_members, _ => (ScaledDoubleDouble)(1 / (_chain.UniformizationRate ?? 1)));
-        return Solve(given, new double[_chain.StateCount], Messages.TimeOutOfRange);
-    }
+    internal ExitSolution MeanTimes() => MeanTimes(Array.ConvertAll(_members, _ => 1.0));
+
+    /// <summary>The mean number of steps until an exit, each weighted with the weight of the state it is made in, over the steps per unit of time.</summary>
+    internal ExitSolution MeanTimes(double[] weights) =>
+        Solve(Array.ConvertAll(weights, weight => (ScaledDoubleDouble)weight / (_chain.UniformizationRate ?? 1)))
+            .ToDoubles(_chain.States, _members, Messages.TimeOutOfRange);
 
     /// <summary>The probability of leaving by one of the exits; rounding never takes it above one.</summary>
     internal ExitSolution ExitProbabilities(int exit)
@@ -58,8 +68,39 @@ internal sealed class ExitSystem<TState> : IDisposable
         }
 
         var given = Array.ConvertAll(_members, member => ExitRate(member, exit));
-        var solution = Solve(given, atExits, Messages.ProbabilityOutOfRange);
+        var solution = Solve(given, atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
         return solution with { Values = Array.ConvertAll(solution.Values, value => Math.Min(1, value)) };
+    }
+
+    /// <summary>Solves y · A = given, both over the members: mean numbers of visits from a start.</summary>
+    internal WideSolution SolveLeft(ScaledDoubleDouble[] given)
+    {
+        var bound = SolveError;
+        if (_staysInRange && TryConvert(given, out var solution) && (!MustDouble(bound)) &&
+            ReductionSolve.SolveLeft(_table.View, _sums, _members.Length, solution))
+        {
+            return new WideSolution(Array.ConvertAll(solution, value => (ScaledDoubleDouble)value), ErrorBasis.SubtractionFree, bound);
+        }
+
+        ScaledDoubleDouble[] values = [.. given];
+        Doubled.SolveLeft(values);
+        return DoubledSolution(values);
+    }
+
+    /// <summary>
+    /// Solves A · x = bounds for numbers of which only the size matters, in double or else in twice the precision; the relative error of an
+    /// entry is at most <see cref="SolveError"/>.
+    /// </summary>
+    internal ScaledDoubleDouble[] SolveUpper(ScaledDoubleDouble[] bounds)
+    {
+        if (_staysInRange && TryConvert(bounds, out var solution) && ReductionSolve.SolveRight(_table.View, _sums, _members.Length, solution))
+        {
+            return Array.ConvertAll(solution, value => (ScaledDoubleDouble)value);
+        }
+
+        ScaledDoubleDouble[] values = [.. bounds];
+        Doubled.SolveRight(values);
+        return values;
     }
 
     /// <summary>
@@ -102,17 +143,42 @@ internal sealed class ExitSystem<TState> : IDisposable
         return rate;
     }
 
-    /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
-    private ExitSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere, Func<object, long, string> outOfRange)
+    private static bool TryConvert(ScaledDoubleDouble[] given, out double[] doubles)
     {
-        var mustProve = _options.CertificateLevel == CertificateLevel.Proof;
-        var fast = _staysInRange ? SolveFast(Array.ConvertAll(given, value => value.ToDouble()), elsewhere, mustProve) : null;
-        return fast is not null && (!mustProve || fast.RelativeErrorBound <= DoubledElimination.GoodEnough || _members.Length > DoubledElimination.MostStates)
-            ? fast
-            : SolveDoubled(given, outOfRange);
+        doubles = Array.ConvertAll(given, value => value.ToDouble());
+        for (var k = 0; k < given.Length; k++)
+        {
+            if (!given[k].IsZero && !double.IsNormal(doubles[k]))
+            {
+                return false;
+            }
+        }
+
+        return true;
     }
 
-    private ExitSolution? SolveFast(double[] given, double[] elsewhere, bool mustProve)
+    /// <summary>Whether a proof is asked for that this bound does not give, of a system small enough to be reduced once more for it.</summary>
+    private bool MustDouble(double bound) =>
+        _options.CertificateLevel == CertificateLevel.Proof && !(bound <= DoubledElimination.GoodEnough) && _members.Length <= DoubledElimination.MostStates;
+
+    /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
+    private WideSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere)
+    {
+        var fast = _staysInRange && TryConvert(given, out var doubles) ? SolveFast(doubles, elsewhere) : null;
+        if (fast is not null && !MustDouble(fast.RelativeErrorBound))
+        {
+            return new WideSolution(Array.ConvertAll(fast.Values, value => (ScaledDoubleDouble)value), fast.Basis, fast.RelativeErrorBound);
+        }
+
+        ScaledDoubleDouble[] solution = [.. given];
+        Doubled.SolveRight(solution);
+        return DoubledSolution(solution);
+    }
+
+    private WideSolution DoubledSolution(ScaledDoubleDouble[] values) =>
+        new(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
+
+    private ExitSolution? SolveFast(double[] given, double[] elsewhere)
     {
         var solution = given.AsSpan().ToArray();
         if (!ReductionSolve.SolveRight(_table.View, _sums, _members.Length, solution))
@@ -120,8 +186,8 @@ internal sealed class ExitSystem<TState> : IDisposable
             return null;
         }
 
-        var bound = ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
-        if (!mustProve || !(bound < 1))
+        var bound = SolveError;
+        if (_options.CertificateLevel != CertificateLevel.Proof || !(bound < 1))
         {
             return new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
         }
@@ -140,24 +206,6 @@ internal sealed class ExitSystem<TState> : IDisposable
         return refined < bound
             ? new ExitSolution(Array.ConvertAll(_members, member => values[member]), ErrorBasis.RefinedMonotone, refined)
             : new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
-    }
-
-    private ExitSolution SolveDoubled(ScaledDoubleDouble[] given, Func<object, long, string> outOfRange)
-    {
-        _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
-        ScaledDoubleDouble[] solution = [.. given];
-        _doubled.SolveRight(solution);
-        var values = Array.ConvertAll(solution, value => value.ToDouble());
-        for (var k = 0; k < values.Length; k++)
-        {
-            if (!solution[k].IsZero && !double.IsNormal(values[k]))
-            {
-                var state = _chain.States[_members[k]];
-                throw new NumericalRangeException(outOfRange(state, solution[k].Exponent), Text.Label(state));
-            }
-        }
-
-        return new ExitSolution(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
     }
 
     private readonly struct Refinement(
