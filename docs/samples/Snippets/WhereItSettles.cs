@@ -63,6 +63,26 @@ internal static class WhereItSettles
         #endregion
     }
 
+    public static void Polished()
+    {
+        #region polished
+        // Two pumps that are almost never exchanged; invented figures.
+        Chain<string> pumps = Chain.FromTransitions<string>(
+        [
+            new("first runs", "first runs", 0.75), new("first runs", "first rests", 0.25), new("first runs", "second runs", 1e-12),
+            new("first rests", "first runs", 0.5), new("first rests", "first rests", 0.5),
+            new("second runs", "second runs", 0.875), new("second runs", "second rests", 0.125), new("second runs", "first runs", 2e-12),
+            new("second rests", "second runs", 1),
+        ]);
+
+        foreach (IStationaryMethod method in new IStationaryMethod[] { new LinearSystemMethod(), new PolishedMethod(new LinearSystemMethod()) })
+        {
+            Certificate proof = pumps.Stationary(method).Certificate;
+            Console.WriteLine($"{proof.Method}: proved to six digits: {proof.RelativeErrorBound < 1e-6}, to fifteen: {proof.RelativeErrorBound < 1e-15}");
+        }
+        #endregion
+    }
+
     public static void NotConverged()
     {
         var pump = InventedChains.Pump;
