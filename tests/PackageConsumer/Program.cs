@@ -42,6 +42,7 @@ checks.Figure("share new", shares[Stage.New], 10.0 / 15);
 checks.Figure("share failed", shares[Stage.Failed], 1.0 / 15);
 checks.Holds("the certificate is a proof", shares.Certificate.IsProof);
 checks.Figure("share failed, linear system", pump.Stationary(new LinearSystemMethod())[Stage.Failed], 1.0 / 15);
+checks.Figure("share failed, polished", pump.Stationary(new PolishedMethod(new LinearSystemMethod())).Require(relativeError: 1e-15)[Stage.Failed], 1.0 / 15);
 checks.Figure("share failed, aggregation", pump.Stationary(new AggregationMethod())[Stage.Failed], 1.0 / 15);
 checks.Figure("weeks until failed", pump.TimeTo(Stage.Failed).Mean(Stage.New), 14);
 checks.Holds("tables can be printed", shares.ToString().Contains("Failed", StringComparison.Ordinal));

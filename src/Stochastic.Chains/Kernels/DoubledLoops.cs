@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
@@ -48,24 +49,33 @@ internal static class DoubledLoops
     }
 
     /// <summary>The sum of non-negative numbers, with a relative error of at most <see cref="SumError"/>.</summary>
+    /// <remarks>Four sums run side by side, for each one waits for its own last addition; merging them loses less than 16 · 3.1 u².</remarks>
     internal static (double High, double Low) Sum(ReadOnlySpan<double> terms)
     {
         var vectors = MemoryMarshal.Cast<double, Vector256<double>>(terms);
-        var high = Vector256<double>.Zero;
-        var low = Vector256<double>.Zero;
-        foreach (var term in vectors)
+        var zero = (High: Vector256<double>.Zero, Low: Vector256<double>.Zero);
+        var (first, second, third, fourth) = (zero, zero, zero, zero);
+        var next = 0;
+        for (; next + 4 <= vectors.Length; next += 4)
         {
-            var sum = high + term;
-            var part = sum - high;
-            low += (high - (sum - part)) + (term - part);
-            high = sum + low;
-            low -= high - sum;
+            first = Add(first.High, first.Low, vectors[next], Vector256<double>.Zero);
+            second = Add(second.High, second.Low, vectors[next + 1], Vector256<double>.Zero);
+            third = Add(third.High, third.Low, vectors[next + 2], Vector256<double>.Zero);
+            fourth = Add(fourth.High, fourth.Low, vectors[next + 3], Vector256<double>.Zero);
         }
 
+        for (; next < vectors.Length; next++)
+        {
+            first = Add(first.High, first.Low, vectors[next], Vector256<double>.Zero);
+        }
+
+        first = Add(first.High, first.Low, second.High, second.Low);
+        third = Add(third.High, third.Low, fourth.High, fourth.Low);
+        first = Add(first.High, first.Low, third.High, third.Low);
         var total = (High: 0.0, Low: 0.0);
         for (var lane = 0; lane < Lanes; lane++)
         {
-            total = DoubleDouble.Add(total.High, total.Low, high[lane], low[lane]);
+            total = DoubleDouble.Add(total.High, total.Low, first.High[lane], first.Low[lane]);
         }
 
         foreach (var term in terms[(vectors.Length * Lanes)..])
@@ -74,6 +84,18 @@ internal static class DoubledLoops
         }
 
         return total;
+    }
+
+    /// <summary>What <see cref="DoubleDouble.Add"/> does, lane by lane.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static (Vector256<double> High, Vector256<double> Low) Add(
+        Vector256<double> firstHigh, Vector256<double> firstLow, Vector256<double> secondHigh, Vector256<double> secondLow)
+    {
+        var sum = firstHigh + secondHigh;
+        var part = sum - firstHigh;
+        var rest = (firstHigh - (sum - part)) + (secondHigh - part) + (firstLow + secondLow);
+        var total = sum + rest;
+        return (total, rest - (total - sum));
     }
 
     /// <summary>The bound on the relative error of adding up so many non-negative numbers or products here: (4 n + 40) u².</summary>

@@ -6,8 +6,8 @@ namespace Stochastic.Chains;
 /// <summary>State reduction: eliminates one state after the other without ever subtracting.</summary>
 /// <remarks>
 /// Every share comes out with nearly all its digits, however small it is and however slowly the chain mixes; the order of the states
-/// does not matter. Where a proof is asked for, the shares are refined to a few units of rounding; where refinement cannot help and the
-/// class has at most 500 states, the elimination is repeated in twice the precision. Where a product would leave the range of a double,
+/// does not matter. Where a proof is asked for, the shares are refined to a few units of rounding; where refinement cannot help, the
+/// elimination of a class of up to <see cref="MaxDoubledStates"/> states is repeated in twice the precision. Where a product would leave the range of a double,
 /// it is repeated with wider exponents. O(n³) time and 8 n² bytes. Sources: Grassmann, Taksar and Heyman 1985, Operations Research 33,
 /// 1107–1116; Sheskin 1985, Operations Research 33, 228–235.
 /// </remarks>
@@ -16,6 +16,22 @@ public sealed record EliminationMethod : IStationaryMethod
 {
     /// <inheritdoc/>
     public string Name => "state reduction";
+
+    /// <summary>
+    /// Gets the largest class whose elimination is repeated in twice the precision when refinement does not prove the shares to a few
+    /// units of rounding: about ten times the work, and 32 n² bytes. Default: 500.
+    /// </summary>
+    /// <exception cref="ArgumentOutOfRangeException">Set to a negative number.</exception>
+    public int MaxDoubledStates
+    {
+        get;
+        init
+        {
+            ArgumentOutOfRangeException.ThrowIfNegative(value);
+            field = value;
+        }
+    }
+    = DoubledElimination.MostStates;
 
     /// <summary>The vectors to compute with; tests force each kind.</summary>
     internal InstructionSet Instructions { get; init; } = InstructionSet.Widest;
@@ -26,6 +42,6 @@ public sealed record EliminationMethod : IStationaryMethod
     {
         ArgumentNullException.ThrowIfNull(problem);
         problem.Options.RequireMemory(problem.StateCount, sizeof(double) * (long)problem.StateCount * problem.StateCount);
-        return StationaryElimination.Solve(problem, Instructions);
+        return StationaryElimination.Solve(problem, Instructions, MaxDoubledStates);
     }
 }

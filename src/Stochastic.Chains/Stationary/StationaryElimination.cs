@@ -8,7 +8,7 @@ internal static class StationaryElimination
     private const int WideBytes = 16;
     private const double SmallReference = 1.0 / 16;
 
-    internal static StationaryVector Solve(StationaryProblem problem, InstructionSet instructions)
+    internal static StationaryVector Solve(StationaryProblem problem, InstructionSet instructions, int mostDoubled)
     {
         var mustProve = problem.Options.CertificateLevel == CertificateLevel.Proof;
         var order = problem.Members.ToArray();
@@ -31,7 +31,7 @@ internal static class StationaryElimination
             return fast;
         }
 
-        return mustProve && problem.StateCount <= DoubledElimination.MostStates ? SolveDoubled(problem) : fast ?? SolveWide(problem);
+        return mustProve && problem.StateCount <= mostDoubled ? SolveDoubled(problem) : fast ?? SolveWide(problem);
     }
 
     /// <summary>Elimination in doubles, refined where a proof is asked for; null where a product could leave their range.</summary>

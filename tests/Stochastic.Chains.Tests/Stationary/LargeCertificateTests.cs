@@ -66,4 +66,19 @@ public class LargeCertificateTests
         shares.Certificate.Basis.Should().Be(ErrorBasis.RefinedMonotone);
         shares.Certificate.RelativeErrorBound.Should().BeLessThanOrEqualTo(Tolerances.FourRoundings);
     }
+
+    [Fact]
+    public void A_large_chain_that_cannot_be_refined_is_eliminated_in_twice_the_precision_on_request()
+    {
+        const int States = 520;
+        var chain = ChainFamilies.Named("nearly decomposable").Create(States, seed: 3).ToChain();
+
+        var unasked = chain.Stationary().Certificate;
+        var asked = chain.Stationary(new EliminationMethod { MaxDoubledStates = States }).Certificate;
+
+        unasked.IsProof.Should().BeTrue();
+        unasked.RelativeErrorBound.Should().BeGreaterThan(Tolerances.FourRoundings);
+        asked.Basis.Should().Be(ErrorBasis.DoubledElimination);
+        asked.RelativeErrorBound.Should().BeLessThanOrEqualTo(Tolerances.FourRoundings);
+    }
 }

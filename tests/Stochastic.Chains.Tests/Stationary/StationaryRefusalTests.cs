@@ -170,11 +170,14 @@ public class StationaryRefusalTests
     [Fact]
     public void Defaults_are_as_documented_and_bad_options_are_refused()
     {
+        new EliminationMethod().Should().Be(new EliminationMethod { MaxDoubledStates = 500 });
         new PowerMethod().Should().Be(new PowerMethod { Tolerance = 1e-12, MaxIterations = 100_000 });
         new GaussSeidelMethod().Should().Be(new GaussSeidelMethod { Tolerance = 1e-12, MaxIterations = 10_000 });
         new AggregationMethod().Should().Be(new AggregationMethod { Tolerance = 1e-12, MaxIterations = 1_000, CouplingThreshold = 0.01, SweepsPerCycle = 8 });
         new SolveOptions().Should().Be(new SolveOptions { CertificateLevel = CertificateLevel.Proof, MemoryLimit = 2L << 30, Parallelism = 1 });
 
+        FluentActions.Invoking(() => new EliminationMethod { MaxDoubledStates = -1 }).Should().Throw<ArgumentOutOfRangeException>();
+        FluentActions.Invoking(() => new PolishedMethod(null!)).Should().Throw<ArgumentNullException>();
         FluentActions.Invoking(() => new PowerMethod { Tolerance = 0 }).Should().Throw<ArgumentOutOfRangeException>();
         FluentActions.Invoking(() => new GaussSeidelMethod { MaxIterations = 0 }).Should().Throw<ArgumentOutOfRangeException>();
         FluentActions.Invoking(() => new SolveOptions { Parallelism = 0 }).Should().Throw<ArgumentOutOfRangeException>();
