@@ -1,4 +1,6 @@
+using System.Collections;
 using System.Diagnostics;
+using System.Diagnostics.CodeAnalysis;
 using System.Globalization;
 using Stochastic.Chains.Internal;
 
@@ -16,7 +18,8 @@ namespace Stochastic.Chains;
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
-public sealed class ConditionalTimes<TState> : ICertified
+[SuppressMessage("Naming", "CA1710", Justification = "The trade's word; that it enumerates is a convenience.")]
+public sealed class ConditionalTimes<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
     private const int LargestTable = 24;
@@ -44,6 +47,11 @@ public sealed class ConditionalTimes<TState> : ICertified
     /// <returns>0 inside the target; +∞ where it is never reached.</returns>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
     public double Mean(TState from) => _means[States.Require(from)];
+
+    /// <summary>Enumerates the states with their mean time, in state order.</summary>
+    public IEnumerator<KeyValuePair<TState, double>> GetEnumerator() => States.Select((state, position) => KeyValuePair.Create(state, _means[position])).GetEnumerator();
+
+    IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the means, the same in every culture.</summary>
     public override string ToString()

@@ -1,4 +1,6 @@
+using System.Collections;
 using System.Diagnostics;
+using System.Diagnostics.CodeAnalysis;
 using System.Globalization;
 using Stochastic.Chains.Internal;
 
@@ -19,7 +21,8 @@ namespace Stochastic.Chains;
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
-public sealed class ExpectedVisits<TState> : ICertified
+[SuppressMessage("Naming", "CA1710", Justification = "The trade's word; that it enumerates is a convenience.")]
+public sealed class ExpectedVisits<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
     private const int LargestTable = 24;
@@ -50,6 +53,11 @@ public sealed class ExpectedVisits<TState> : ICertified
     /// <param name="state">The state that is visited.</param>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
     public double this[TState state] => _visits[States.Require(state)];
+
+    /// <summary>Enumerates the states with their mean number of visits, in state order.</summary>
+    public IEnumerator<KeyValuePair<TState, double>> GetEnumerator() => States.Select((state, position) => KeyValuePair.Create(state, _visits[position])).GetEnumerator();
+
+    IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the visits, the same in every culture.</summary>
     public override string ToString()

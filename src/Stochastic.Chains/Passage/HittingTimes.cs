@@ -1,4 +1,6 @@
+using System.Collections;
 using System.Diagnostics;
+using System.Diagnostics.CodeAnalysis;
 using System.Globalization;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Passage;
@@ -21,7 +23,8 @@ namespace Stochastic.Chains;
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
-public sealed class HittingTimes<TState> : ICertified
+[SuppressMessage("Naming", "CA1710", Justification = "The trade's word; that it enumerates is a convenience.")]
+public sealed class HittingTimes<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
     private const int LargestTable = 24;
@@ -215,6 +218,11 @@ public sealed class HittingTimes<TState> : ICertified
             ? _question.Quantile(from, probability, ReachingProbability(from), options)
             : throw new ArgumentOutOfRangeException(nameof(probability), probability, Messages.ProbabilityBetweenZeroAndOne(probability));
     }
+
+    /// <summary>Enumerates the states with their mean time, in state order.</summary>
+    public IEnumerator<KeyValuePair<TState, double>> GetEnumerator() => States.Select((state, position) => KeyValuePair.Create(state, _means[position])).GetEnumerator();
+
+    IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the means and probabilities, the same in every culture.</summary>
     public override string ToString()

@@ -73,6 +73,12 @@ internal sealed class SurvivorSteps
     /// </summary>
     internal bool TryFindFactor(out double factor)
     {
+        factor = 0;
+        if (OnTheWay == 0)
+        {
+            return true;
+        }
+
         var (least, most) = (double.PositiveInfinity, 0.0);
         for (var state = 0; state < _current.Length; state++)
         {
