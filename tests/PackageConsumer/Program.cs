@@ -21,6 +21,14 @@ checks.Figure("lost after four weeks", inFourWeeks["lost"], 0.01324);
 var stock = Distribution.FromWeights(pool.States, ("clean", 3), ("at shop", 1));
 checks.Figure("stock at shop after a week", pool.StartingIn(stock).After(1)["at shop"], (0.75 * 0.8) + (0.25 * 0.5));
 
+checks.Figure("forecast of four weeks", pool.StartingIn("dirty").Forecast(6)[4]["clean"], 0.36298);
+checks.Figure("a chain for each week", pool.StartingIn("dirty").Through([pool, pool, pool, pool])["lost"], 0.01324);
+PopulationForecast<string> crates = pool.StartingWith(("clean", 100)).WithRecruitment(("clean", 5)).WithLosses(("clean", 0.1)).Forecast(1);
+checks.Figure("crates after a week", crates.Expected(1, "clean"), (100 * 0.9 * 0.2) + 5);
+checks.Figure("chance of none at the shop", pool.StartingWith(("clean", 2)).Forecast(1).Count(1, "at shop").AtMost(0), 0.04);
+checks.Figure("lost in the end", pool.LongRun()["clean", "lost"], 0.02 / 0.0298);
+checks.Figure("lost in the end, one start", pool.StartingIn("clean").LongRun()["lost"], 0.02 / 0.0298);
+
 Absorption<string> ends = pool.Absorption().Require(relativeError: 1e-12);
 checks.Figure("ends up lost", ends.Probability("clean", "lost"), 0.02 / 0.0298);
 checks.Figure("weeks until the end", ends.MeanSteps("clean"), 4.279 / 0.0298);
@@ -63,8 +71,12 @@ Chain<string> plant = Chain.FromRates([
 checks.Figure("hours until none runs", plant.TimeTo("none runs").Mean("both run"), ((3 * 1e-4) + 0.05) / (2 * 1e-4 * 1e-4));
 checks.Figure("share of time none runs", plant.Stationary()["none runs"], 8e-6 / 1.004008);
 
+Chain<string> single = Chain.FromRates([new TransitionRate<string>("runs", "failed", 0.5), new TransitionRate<string>("failed", "runs", 0.5)]);
+checks.Figure("failed after three hours", single.StartingIn("runs").AfterTime(3)["failed"], (1 - Math.Exp(-3)) / 2);
+
 Chain<int> moves = Chain.FromTransitions([new Transition<int>(7, 9, 1.0), new Transition<int>(9, 7, 1.0)]);
 checks.Figure("period", moves.Structure().Period, 2);
+checks.Figure("every second step", moves.StartingIn(7).LongRun().AtPhase(4)[7], 1);
 
 // Counted from a log: of three moves out of "clean", two led to the shop.
 var columns = new EventLogColumns { Item = "crate", Time = "at", State = "stage" };

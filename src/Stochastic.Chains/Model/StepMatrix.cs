@@ -35,6 +35,9 @@ internal sealed class StepMatrix
     /// <summary>The largest number of moves, stays included, that lead into one state.</summary>
     internal int LargestIndegree { get; }
 
+    /// <summary>The largest number of moves, stays included, that lead out of one state.</summary>
+    internal int LargestOutdegree { get; private set; }
+
     /// <summary>
     /// The largest relative error of a stay, in units of 2⁻⁵³: one minus a compensated sum of k terms is off by at most 2⁻⁵³ of
     /// itself and k² · 2⁻¹⁰⁴, which matters where the stay is tiny.
@@ -65,6 +68,24 @@ internal sealed class StepMatrix
         }
     }
 
+    /// <summary>Averages a figure of each state over where a step leads: target = P · source.</summary>
+    internal void MultiplyColumn(ReadOnlySpan<double> source, Span<double> target)
+    {
+        for (var row = 0; row < target.Length; row++)
+        {
+            var sum = _stays[row] * source[row];
+            foreach (var (column, probability) in _matrix.Row(row))
+            {
+                if (column != row)
+                {
+                    sum = Math.FusedMultiplyAdd(probability, source[column], sum);
+                }
+            }
+
+            target[row] = sum / _sums[row];
+        }
+    }
+
     private void ReadRow(int row, int[] indegrees)
     {
         var off = default(CompensatedSum);
@@ -72,9 +93,11 @@ internal sealed class StepMatrix
         rest.Add(1);
         var canStay = false;
         var terms = 1.0;
+        var outdegree = 0;
         foreach (var (column, probability) in _matrix.Row(row))
         {
             indegrees[column]++;
+            outdegree++;
             if (column == row)
             {
                 canStay = true;
@@ -87,6 +110,7 @@ internal sealed class StepMatrix
             SmallestProbability = Math.Min(SmallestProbability, probability);
         }
 
+        LargestOutdegree = Math.Max(LargestOutdegree, outdegree);
         _stays[row] = canStay ? Math.Max(0, rest.Value) : 0;
         off.Add(_stays[row]);
         _sums[row] = off.Value;

@@ -1,77 +1,104 @@
-using Stochastic.Chains.Kernels;
+using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains.Steps;
 
-/// <summary>Takes a distribution through a number of steps, one multiplication each.</summary>
+/// <summary>Takes a distribution through steps of one chain, or of a sequence of chains over the same states.</summary>
 internal static class Propagation<TState>
     where TState : notnull
 {
-    /// <summary>Beside the additions of a step: the row sum, the division by it, the stay, and the product.</summary>
-    private const int RoundingsPerStep = 8;
-    private const double SmallestNormal = 2.2250738585072014e-308;
     private const int StepsBetweenReports = 1 << 10;
 
+    /// <summary>Where things stand after a number of steps of one chain.</summary>
     internal static StepDistribution<TState> Run(ChainStart<TState> start, long steps, SolveOptions options)
     {
-        var chain = start.Chain;
-        var matrix = chain.Derive(static chain => new StepMatrix(chain.Matrix));
+        var matrix = StepPath<TState>.MatrixOf(start.Chain);
         var report = options.Report("steps");
-        var current = start.Distribution.ToArray();
-        var next = new double[current.Length];
-        var staysInRange = true;
-        var made = 0L;
-        while (made < steps)
+        var path = new StepPath<TState>(start.Distribution);
+        while (path.Steps < steps)
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            staysInRange = staysInRange && SmallestPositive(current) * matrix.SmallestProbability >= SmallestNormal;
-            matrix.Multiply(current, next);
-            made++;
-            if (current.AsSpan().SequenceEqual(next))
+            path.Advance(matrix, path.IsSettledUnder(matrix) ? steps - path.Steps : 1);
+            if (path.Steps % StepsBetweenReports == 0)
             {
-                break; // the same numbers give the same numbers: nothing changes any more
-            }
-
-            (current, next) = (next, current);
-            if (made % StepsBetweenReports == 0)
-            {
-                report?.Invoke((double)made / steps);
+                report?.Invoke((double)path.Steps / steps);
             }
         }
 
-        return new StepDistribution<TState>(chain.States, current, steps, Certify(current, matrix, steps, made, staysInRange, options));
+        return path.ToDistribution(options);
     }
 
-    private static Certificate Certify(double[] values, StepMatrix matrix, long steps, long made, bool staysInRange, SolveOptions options)
+    /// <summary>Where things stand at every step from 0 on, one chain for each step; nothing is held.</summary>
+    internal static IEnumerable<StepDistribution<TState>> Stream(Distribution<TState> start, IEnumerable<Chain<TState>> chains, SolveOptions options)
     {
-        var relative = SubtractionFreeBound.OfRoundings((double)steps * (matrix.LargestIndegree + matrix.StayRoundings + RoundingsPerStep));
-        var isProof = options.CertificateLevel == CertificateLevel.Proof && double.IsFinite(relative);
-        var lost = (double)steps * values.Length * double.Epsilon;
-        return new Certificate
+        var path = new StepPath<TState>(start);
+        yield return path.ToDistribution(options);
+        foreach (var chain in Checked(start.States, chains))
         {
-            Method = "propagation",
-            Reason = made < steps
-                ? "One multiplication for each step; stopped early because a step changed nothing any more."
-                : "One multiplication for each step; no power of the matrix is formed.",
-            Residual = options.CertificateLevel >= CertificateLevel.Residual ? Math.Abs(CompensatedSum.Of(values) - 1) : double.PositiveInfinity,
-            RelativeErrorBound = isProof && staysInRange ? relative : double.PositiveInfinity,
-            AbsoluteErrorBound = isProof ? (relative * values.Max()) + (staysInRange ? 0 : lost) : double.PositiveInfinity,
-            Basis = isProof ? ErrorBasis.SubtractionFree : ErrorBasis.None,
-            IsProof = isProof,
-            Iterations = made,
-        };
+            options.CancellationToken.ThrowIfCancellationRequested();
+            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+            yield return path.ToDistribution(options);
+        }
     }
 
-    private static double SmallestPositive(double[] values)
+    /// <summary>Where things stand after one step of each chain.</summary>
+    internal static StepDistribution<TState> Through(Distribution<TState> start, IEnumerable<Chain<TState>> chains, SolveOptions options)
     {
-        var smallest = double.PositiveInfinity;
-        foreach (var value in values)
+        var path = new StepPath<TState>(start);
+        foreach (var chain in Checked(start.States, chains))
         {
-            if (value > 0 && value < smallest)
+            options.CancellationToken.ThrowIfCancellationRequested();
+            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+        }
+
+        return path.ToDistribution(options);
+    }
+
+    /// <summary>The same chain so many times.</summary>
+    internal static IEnumerable<Chain<TState>> Repeat(Chain<TState> chain, long times)
+    {
+        for (var k = 0L; k < times; k++)
+        {
+            yield return chain;
+        }
+    }
+
+    /// <summary>The chains of one period after the other, each checked to be over the same states.</summary>
+    /// <exception cref="ArgumentException">A chain is missing or over other states.</exception>
+    internal static IEnumerable<Chain<TState>> Checked(StateSpace<TState> states, IEnumerable<Chain<TState>> chains)
+    {
+        var period = 0;
+        foreach (var chain in chains)
+        {
+            period++;
+            if (chain is null)
             {
-                smallest = value;
+                throw new ArgumentException(Messages.NoChainForPeriod(period), nameof(chains));
+            }
+
+            yield return chain.States.Matches(states) ? chain : throw new ArgumentException(Difference(states, chain.States, period), nameof(chains));
+        }
+    }
+
+    /// <summary>Says which state makes the difference: one that only one of the two knows, or the first out of order.</summary>
+    private static string Difference(StateSpace<TState> expected, StateSpace<TState> found, int period)
+    {
+        foreach (var state in expected)
+        {
+            if (!found.Contains(state))
+            {
+                return Messages.StateMissingInPeriod(state, period);
             }
         }
 
-        return smallest;
+        foreach (var state in found)
+        {
+            if (!expected.Contains(state))
+            {
+                return Messages.StateAddedInPeriod(state, period);
+            }
+        }
+
+        var position = Enumerable.Range(0, expected.Count).First(k => !expected.Comparer.Equals(expected[k], found[k]));
+        return Messages.StateOrderInPeriod(expected[position], found[position], position, period);
     }
 }

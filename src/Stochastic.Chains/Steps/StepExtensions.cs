@@ -33,4 +33,18 @@ public static class StepExtensions
             ? new ChainStart<TState>(chain, distribution)
             : throw new ArgumentException(Messages.DifferentStates(chain.StateCount, distribution.Count), nameof(distribution));
     }
+
+    /// <summary>Starts a number of items, each of which moves through the chain independently of the others.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">The chain.</param>
+    /// <param name="counts">States with how many items start there, each state at most once; states not named get none.</param>
+    /// <exception cref="ArgumentException">A number is negative or too large, or a state is repeated.</exception>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <example><code>var quarter = pool.StartingWith(("clean", 1200), ("dirty", 310)).Forecast(13);</code></example>
+    public static Population<TState> StartingWith<TState>(this Chain<TState> chain, params IEnumerable<(TState State, long Count)> counts)
+        where TState : notnull
+    {
+        ArgumentNullException.ThrowIfNull(chain);
+        return Population<TState>.Of(chain, counts, nameof(counts));
+    }
 }

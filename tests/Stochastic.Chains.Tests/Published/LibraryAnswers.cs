@@ -12,6 +12,7 @@ internal static class LibraryAnswers
             ["stationary"] = query => query.Vector().Zip(Selected(query, "states", Stationary(query))),
             ["restart_ranking"] = query => query.Vector().Zip(Stationary(query)),
             ["stationary_by_class"] = StationaryByClass,
+            ["cyclic_class_of"] = CyclicClassOf,
             ["loss_probability"] = query => [(query.Scalar(), Stationary(query)[^1])],
             ["mean_recurrence"] = query => query.Vector().Zip(Selected(query, query.HasArgument("states") ? "states" : "state", MeanRecurrence(query))),
             ["hitting_mean"] = query => query.Vector().Zip(Selected(query, "start", Means(query, query.States("target")))),
@@ -32,6 +33,12 @@ internal static class LibraryAnswers
                 (pair[1], After(query, query.IntegerArgument("start"), query.IntegerArgument("n"))[(int)pair[0].Value.ToDouble()])),
             ["absorbed_by"] = query => query.Vector().Zip(query.States("n").Select(steps => After(query, 0, steps)[^1])),
             ["complete_by"] = query => query.Vector().Zip(query.States("steps").Select(steps => After(query, 0, steps)[^1])),
+            ["transient_row"] = query => query.Vector().Zip(AfterTime(query, query.IntegerArgument("start"))),
+            ["availability"] = query => [(query.Scalar(), AfterTime(query, 0)[0])],
+            ["reliability"] = Reliability,
+            ["embedded_step_matrix"] = query => query.Matrix().SelectMany((row, start) =>
+                row.Zip(query.Chain().ToChain().StartingIn(start).AfterTime(query.RationalArgument("step").ToDouble()).ToArray())),
+            ["total_variation_worst"] = TotalVariationWorst,
             ["total_variation"] = query => query.Vector().Zip(query.States("n").Select(steps => Distance(query, steps))),
         };
 
@@ -84,6 +91,32 @@ internal static class LibraryAnswers
 
     /// <summary>Steps of the published step matrix; for a chain in continuous time that is its given uniformization.</summary>
     private static double[] After(PublishedQuery query, int start, int steps) => query.Chain().ToStepChain().StartingIn(start).After(steps).ToArray();
+
+    private static double[] AfterTime(PublishedQuery query, int start) =>
+        query.Chain().ToChain().StartingIn(start).AfterTime(query.RationalArgument("t").ToDouble()).ToArray();
+
+    /// <summary>The probability that the last state, made absorbing, is not reached within the time.</summary>
+    private static IEnumerable<Pair> Reliability(PublishedQuery query)
+    {
+        var failed = query.Chain().StateCount - 1;
+        var chain = Chain.FromRates(query.Chain().Rates.Where(move => move.From != failed).Select(move => new TransitionRate<int>(move.From, move.To, move.Rate.ToDouble())));
+        var after = chain.StartingIn(query.IntegerArgument("start")).AfterTime(query.RationalArgument("t").ToDouble());
+        return [(query.Scalar(), chain.States.Where(state => state != failed).Sum(state => after[state]))];
+    }
+
+    /// <summary>The cyclic class that holds a state is the one whose limits give it a share when its phase is looked at, from state 0.</summary>
+    private static IEnumerable<Pair> CyclicClassOf(PublishedQuery query)
+    {
+        var longRun = query.Chain().ToChain().LongRun().Row(0);
+        var limits = Enumerable.Range(0, (int)longRun.Period).Select(phase => longRun.AtPhase(phase)).ToList();
+        return query.Vector().Zip(Enumerable.Range(0, longRun.Count).Select(state => (double)limits.FindIndex(limit => limit[state] > 0)));
+    }
+
+    private static IEnumerable<Pair> TotalVariationWorst(PublishedQuery query)
+    {
+        var chain = query.Chain().ToChain();
+        return query.Vector().Zip(query.States("n").Select(steps => chain.States.Max(start => chain.StartingIn(start).After(steps).TotalVariation(chain.Stationary()))));
+    }
 
     private static double Distance(PublishedQuery query, int steps)
     {

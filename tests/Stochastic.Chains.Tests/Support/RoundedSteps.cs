@@ -62,7 +62,7 @@ internal static class RoundedSteps
         }
     }
 
-    private static RoundedNumber[][] OneStep(ExactChain chain)
+    public static RoundedNumber[][] OneStep(ExactChain chain)
     {
         var matrix = new RoundedNumber[chain.StateCount][];
         for (var state = 0; state < chain.StateCount; state++)
@@ -78,7 +78,7 @@ internal static class RoundedSteps
         return matrix;
     }
 
-    private static RoundedNumber[][] Identity(int count)
+    public static RoundedNumber[][] Identity(int count)
     {
         var matrix = new RoundedNumber[count][];
         for (var i = 0; i < count; i++)
@@ -90,7 +90,7 @@ internal static class RoundedSteps
         return matrix;
     }
 
-    private static RoundedNumber[][] Multiply(RoundedNumber[][] left, RoundedNumber[][] right)
+    public static RoundedNumber[][] Multiply(RoundedNumber[][] left, RoundedNumber[][] right)
     {
         var product = new RoundedNumber[left.Length][];
         for (var i = 0; i < left.Length; i++)
