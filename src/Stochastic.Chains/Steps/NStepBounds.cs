@@ -23,8 +23,10 @@ internal readonly record struct NStepBounds(double Relative, double Absolute, Er
             var ofRow = Evaluation * errors.Rows[row];
             foreach (var value in values.Slice(row * size, size))
             {
-                absolute = Math.Max(absolute, value == 0 && double.IsFinite(entrywise) ? 0 : Math.Min(ofRow, value * entrywise));
-                relative = Math.Max(relative, Math.Min(RelativeTo(value, ofRow), value == 0 && double.IsFinite(entrywise) ? 0 : entrywise));
+                // While no product left the range, a zero is a move that is impossible, and exact.
+                var ofEntry = double.IsFinite(entrywise) ? value * entrywise : double.PositiveInfinity;
+                absolute = Math.Max(absolute, Math.Min(ofRow, ofEntry));
+                relative = Math.Max(relative, ofEntry == 0 ? 0 : Math.Min(RelativeTo(value, ofRow), entrywise));
             }
         }
 

@@ -1,7 +1,7 @@
 namespace Stochastic.Chains;
 
 /// <summary>
-/// A way to compute an n-step transition matrix: <see cref="SquaringMethod"/>, SpectralMethod or
+/// A way to compute an n-step transition matrix: <see cref="SquaringMethod"/>, <see cref="SpectralMethod"/> or
 /// <see cref="PropagationMethod"/>.
 /// </summary>
 /// <remarks>Closed to others, because each method has an error bound of its own that a residual could not replace.</remarks>
