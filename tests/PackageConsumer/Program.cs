@@ -21,6 +21,10 @@ checks.Figure("lost after four weeks", inFourWeeks["lost"], 0.01324);
 var stock = Distribution.FromWeights(pool.States, ("clean", 3), ("at shop", 1));
 checks.Figure("stock at shop after a week", pool.StartingIn(stock).After(1)["at shop"], (0.75 * 0.8) + (0.25 * 0.5));
 
+NStepMatrix<string> fourWeeks = pool.NStep(4).Require(relativeError: 1e-12);
+checks.Figure("clean after four weeks, from the matrix", fourWeeks["dirty", "clean"], 0.36298);
+checks.Figure("the same from the spectrum", pool.Spectrum().NStep("dirty", 4)["clean"], 0.36298);
+
 Absorption<string> ends = pool.Absorption().Require(relativeError: 1e-12);
 checks.Figure("ends up lost", ends.Probability("clean", "lost"), 0.02 / 0.0298);
 checks.Figure("weeks until the end", ends.MeanSteps("clean"), 4.279 / 0.0298);

@@ -13,10 +13,11 @@ internal sealed class SymmetricForm
     private const int MostSweeps = 60;
     private const double UnitRoundoff = 1.1102230246251565e-16;
 
-    // Far below roundoff of a matrix of size one.
-    private const double Negligible = 1e-270;
+    // Of the largest entry: far below its roundoff.
+    private const double Negligible = 1e-20;
 
     private readonly double[] _couplings;
+    private readonly double _negligible;
 
     private SymmetricForm(double[] matrix, int order, CancellationToken cancellation)
     {
@@ -28,6 +29,7 @@ internal sealed class SymmetricForm
         {
             Eigenvalues[row] = matrix[(row * order) + row];
             _couplings[row] = row + 1 < order ? matrix[((row + 1) * order) + row] : 0;
+            _negligible = Math.Max(_negligible, Negligible * Math.Max(Math.Abs(Eigenvalues[row]), Math.Abs(_couplings[row])));
         }
     }
 
@@ -78,7 +80,7 @@ internal sealed class SymmetricForm
     {
         var last = first;
         while (last + 1 < Eigenvalues.Length
-            && Math.Abs(_couplings[last]) > Math.Max(Negligible, UnitRoundoff * (Math.Abs(Eigenvalues[last]) + Math.Abs(Eigenvalues[last + 1]))))
+            && Math.Abs(_couplings[last]) > Math.Max(_negligible, UnitRoundoff * (Math.Abs(Eigenvalues[last]) + Math.Abs(Eigenvalues[last + 1]))))
         {
             last++;
         }

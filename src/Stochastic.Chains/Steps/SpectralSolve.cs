@@ -11,6 +11,7 @@ internal static class SpectralSolve
     /// would leave the range of a double.
     /// </summary>
     private const double BalanceTolerance = 1e-14;
+    private const double CloseToOne = 1e-6;
     private const double SmallestRatio = 1e-280;
 
     internal static SpectralOutcome Run<TState>(Chain<TState> chain, double[] step, CancellationToken cancellation)
@@ -68,9 +69,7 @@ internal static class SpectralSolve
         var eigenvalues = form.Eigenvalues();
         var vectors = SchurEigenvectors.Right(form, cancellation);
         var units = eigenvalues.Zip(vectors, (value, vector) => new SpectralUnit(value, vector)).Where(unit => unit.Eigenvalue.Imaginary >= 0);
-        var settled = SpectralUnits.Settle(units.Select(unit => unit.Scaled()), chain.Structure());
-        var ordered = Array.ConvertAll(SpectralUnits.Order(Array.ConvertAll(settled, unit => unit.Eigenvalue)), index => settled[index]);
-        UseOnes(ordered, chain.Structure());
+        var ordered = SpectralUnits.Order(SpectralUnits.Settle(units.Select(unit => unit.Scaled()), chain.Structure(), Ones(chain.StateCount)));
         cancellation.ThrowIfCancellationRequested();
         return new SpectralOutcome(SpectralFactors.Of(ordered), form.Sweeps, IsSymmetric: false);
     }
@@ -101,18 +100,46 @@ internal static class SpectralSolve
             units[index] = new SpectralUnit(form.Eigenvalues[index], Array.ConvertAll(row, entry => new Complex(entry, 0)));
         }
 
-        var settled = SpectralUnits.Settle(units, chain.Structure());
-        var ordered = Array.ConvertAll(SpectralUnits.Order(Array.ConvertAll(settled, unit => unit.Eigenvalue)), index => settled[index]);
-        var leftRows = UndoSymmetry(ordered, roots);
-        if (chain.Structure().IsIrreducible)
+        var length = Math.Sqrt(VectorLoops.Dot(roots, roots));
+        var ordered = SpectralUnits.Order(SpectralUnits.Settle(units, chain.Structure(), Array.ConvertAll(roots, root => new Complex(root / length, 0))));
+        if (!chain.Structure().IsIrreducible)
         {
-            // The pair of the eigenvalue one is known: ones and the long-run shares.
-            UseOnes(ordered, chain.Structure());
-            var total = VectorLoops.Dot(roots, roots);
-            leftRows[0] = Array.ConvertAll(roots, root => root * root / total);
+            return new SpectralOutcome(SpectralFactors.Of(ordered, UndoSymmetry(ordered, roots)), form.Sweeps, IsSymmetric: true);
         }
 
+        // The pair of the eigenvalue one is known: ones and the long-run shares.
+        MakeOrthogonalToFirst(ordered);
+        var leftRows = UndoSymmetry(ordered, roots);
+        ordered[0] = ordered[0] with { Vector = Ones(order) };
+        leftRows[0] = Array.ConvertAll(roots, root => root * root / (length * length));
         return new SpectralOutcome(SpectralFactors.Of(ordered, leftRows), form.Sweeps, IsSymmetric: true);
+    }
+
+    private static Complex[] Ones(int count) => [.. Enumerable.Repeat(Complex.One, count)];
+
+    /// <summary>
+    /// Where eigenvalues come close to one, their vectors may be mixed with the known one: it is taken out, and what is left of them is made
+    /// orthogonal again (modified Gram and Schmidt).
+    /// </summary>
+    private static void MakeOrthogonalToFirst(SpectralUnit[] units)
+    {
+        var cluster = new List<double[]> { Array.ConvertAll(units[0].Vector, entry => entry.Real) };
+        for (var index = 1; index < units.Length; index++)
+        {
+            var vector = Array.ConvertAll(units[index].Vector, entry => entry.Real);
+            foreach (var earlier in cluster)
+            {
+                VectorLoops.AddScaled(-VectorLoops.Dot(vector, earlier), earlier, vector);
+            }
+
+            var length = Math.Sqrt(VectorLoops.Dot(vector, vector));
+            vector = Array.ConvertAll(vector, entry => entry / length);
+            units[index] = units[index] with { Vector = Array.ConvertAll(vector, entry => new Complex(entry, 0)) };
+            if (units[index].Eigenvalue.Real > 1 - CloseToOne)
+            {
+                cluster.Add(vector);
+            }
+        }
     }
 
     /// <summary>Right vectors D^−½ q and left vectors q D^½ from orthonormal vectors q, each pair scaled by the largest entry of the right one.</summary>
@@ -128,16 +155,6 @@ internal static class SpectralSolve
         }
 
         return leftRows;
-    }
-
-    /// <summary>With one recurrent class the right vector for the eigenvalue one is known: one everywhere.</summary>
-    private static void UseOnes<TState>(SpectralUnit[] units, ChainStructure<TState> structure)
-        where TState : notnull
-    {
-        if (structure.RecurrentClasses.Count == 1 && units[0].Eigenvalue == 1)
-        {
-            units[0] = units[0] with { Vector = [.. Enumerable.Repeat(Complex.One, units[0].Vector.Length)] };
-        }
     }
 }
 
