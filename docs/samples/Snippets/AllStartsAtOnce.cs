@@ -43,7 +43,7 @@ internal static class AllStartsAtOnce
         #region spectrum
         SpectralDecomposition<Stage> spectrum = pump.Spectrum();
 
-        Console.WriteLine($"Second eigenvalue: {spectrum.SubdominantEigenvalue:F4}");
+        Console.WriteLine($"Second eigenvalue: {spectrum.SubdominantEigenvalue?.Real:F4}");
         Console.WriteLine($"Relaxation time: {spectrum.RelaxationTime:F2} weeks");
         Console.WriteLine($"Full set of vectors: {spectrum.IsDiagonalizable}, condition number {spectrum.ConditionNumber:F1}");
 
