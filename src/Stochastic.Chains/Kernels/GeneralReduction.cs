@@ -91,4 +91,25 @@ internal sealed class GeneralReduction<TNumber>(TNumber[] table, int rows, int c
             values[k] /= _sums[k];
         }
     }
+
+    /// <summary>Solves y · A = b for the eliminated states, in place: forward with the rates, then backward with the factors.</summary>
+    internal void SolveLeft(Span<TNumber> values)
+    {
+        for (var k = 0; k < pivots; k++)
+        {
+            values[k] /= _sums[k];
+            for (var j = k + 1; j < pivots; j++)
+            {
+                values[j] += values[k] * table[(k * columns) + j];
+            }
+        }
+
+        for (var k = pivots - 1; k >= 0; k--)
+        {
+            for (var i = k + 1; i < pivots; i++)
+            {
+                values[k] += values[i] * table[(i * columns) + k];
+            }
+        }
+    }
 }

@@ -38,15 +38,28 @@ internal sealed class ExitSystem<TState> : IDisposable
             _table.View, _rates.Rows, _rates.Columns, _rates.Rows, _sums, options.Parallelism, InstructionSet.Widest, options.CancellationToken);
     }
 
+    /// <summary>The factors in twice the working precision, made when they are first needed.</summary>
+    private GeneralReduction<ScaledDoubleDouble> Doubled => _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
+
     /// <summary>Gives the working memory back.</summary>
     public void Dispose() => _table.Dispose();
 
+    /// <summary>A bound below 1 on the relative error of <see cref="SolveUpper"/>; +∞ when there is none.</summary>
+    internal double SolveError => ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
+
+    /// <summary>A bound on the relative error of <see cref="SolveLeft"/>.</summary>
+    internal double LeftError => _doubled is null ? SolveError : DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges);
+
+    /// <summary>Solves A · x = given, both over the members.</summary>
+    internal WideSolution Solve(ScaledDoubleDouble[] given) => Solve(given, new double[_chain.StateCount]);
+
     /// <summary>The mean number of steps until an exit, divided by the steps per unit of time.</summary>
-    internal ExitSolution MeanTimes()
-    {
-        var given = Array.ConvertAll(_members, _ => (ScaledDoubleDouble)(1 / (_chain.UniformizationRate ?? 1)));
-        return Solve(given, new double[_chain.StateCount], Messages.TimeOutOfRange);
-    }
+    internal ExitSolution MeanTimes() => MeanTimes(Array.ConvertAll(_members, _ => 1.0));
+
+    /// <summary>The mean number of steps until an exit, each weighted with the weight of the state it is made in, over the steps per unit of time.</summary>
+    internal ExitSolution MeanTimes(double[] weights) =>
+        Solve(Array.ConvertAll(weights, weight => (ScaledDoubleDouble)weight / (_chain.UniformizationRate ?? 1)))
+            .ToDoubles(_chain.States, _members, Messages.TimeOutOfRange);
 
     /// <summary>The probability of leaving by one of the exits; rounding never takes it above one.</summary>
     internal ExitSolution ExitProbabilities(int exit)
@@ -58,35 +71,141 @@ internal sealed class ExitSystem<TState> : IDisposable
         }
 
         var given = Array.ConvertAll(_members, member => ExitRate(member, exit));
-        var solution = Solve(given, atExits, Messages.ProbabilityOutOfRange);
+        var solution = Solve(given, atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
         return solution with { Values = Array.ConvertAll(solution.Values, value => Math.Min(1, value)) };
     }
 
-    /// <summary>
-    /// The largest relative difference of the two sides of the equations, re-computed from values of all states of the chain. The given
-    /// term of a member is <paramref name="given"/>; targets without a column do not count.
-    /// </summary>
-    internal double Residual(double given, ReadOnlySpan<double> values)
+    /// <summary>Solves y · A = given, both over the members: mean numbers of visits from a start.</summary>
+    internal WideSolution SolveLeft(ScaledDoubleDouble[] given)
     {
-        var largest = 0.0;
-        foreach (var member in _members)
+        var bound = SolveError;
+        if (_staysInRange && TryConvert(given, out var solution) && (!MustDouble(bound)) &&
+            ReductionSolve.SolveLeft(_table.View, _sums, _members.Length, solution))
         {
-            var outflow = default(ScaledDouble);
-            var inflow = (ScaledDouble)given;
-            foreach (var (to, rate) in _chain.Matrix.Row(member))
-            {
-                if (to != member && _rates.ColumnOf(to) >= 0)
-                {
-                    outflow += rate;
-                    inflow += (ScaledDouble)rate * values[to];
-                }
-            }
-
-            var ratio = values[member] > 0 ? (inflow / (outflow * values[member])).ToDouble() : inflow.IsZero ? 1 : 0;
-            largest = Math.Max(largest, Math.Abs(ratio - 1));
+            return new WideSolution(Array.ConvertAll(solution, value => (ScaledDoubleDouble)value), ErrorBasis.SubtractionFree, bound, bound);
         }
 
-        return largest;
+        ScaledDoubleDouble[] values = [.. given];
+        Doubled.SolveLeft(values);
+        return DoubledSolution(values);
+    }
+
+    /// <summary>The inverse of A, row-major over the members, divided by the steps per unit of time: mean numbers of visits between all pairs.</summary>
+    internal VisitTable Inverse()
+    {
+        var count = _members.Length;
+        _options.RequireMemory(count, 2 * sizeof(double) * (long)count * count);
+        var unit = 1 / (_chain.UniformizationRate ?? 1);
+        if (_staysInRange)
+        {
+            using var columns = WorkTable.Rent(count, count);
+            for (var k = 0; k < count; k++)
+            {
+                columns.View.Row(k, 0, count).Clear();
+                columns.View[k, k] = unit;
+            }
+
+            var sharing = new WorkSharing(_options.Parallelism, _options.CancellationToken);
+            if (ReductionSolve.SolveRight(_table.View, _sums, count, columns.View, count, InstructionSet.Widest, sharing))
+            {
+                var values = new double[count * count];
+                for (var k = 0; k < count; k++)
+                {
+                    columns.View.Row(k, 0, count).CopyTo(values.AsSpan(k * count));
+                }
+
+                return new VisitTable(count, values, ErrorBasis.SubtractionFree, SolveError);
+            }
+        }
+
+        return InverseDoubled(unit);
+    }
+
+    /// <summary>y · A = given in double where that is possible, in place; in twice the precision and rounded otherwise.</summary>
+    internal void IterateLeft(double[] values)
+    {
+        double[] trial = [.. values];
+        if (_staysInRange && ReductionSolve.SolveLeft(_table.View, _sums, _members.Length, trial))
+        {
+            trial.CopyTo(values, 0);
+            return;
+        }
+
+        var wide = Array.ConvertAll(values, value => (ScaledDoubleDouble)value);
+        Doubled.SolveLeft(wide);
+        Array.ConvertAll(wide, value => value.ToDouble()).CopyTo(values, 0);
+    }
+
+    /// <summary>
+    /// Solves A · x = bounds for numbers of which only the size matters, in double or else in twice the precision; the relative error of an
+    /// entry is at most <see cref="SolveError"/>.
+    /// </summary>
+    internal ScaledDoubleDouble[] SolveUpper(ScaledDoubleDouble[] bounds)
+    {
+        if (_staysInRange && TryConvert(bounds, out var solution) && ReductionSolve.SolveRight(_table.View, _sums, _members.Length, solution))
+        {
+            return Array.ConvertAll(solution, value => (ScaledDoubleDouble)value);
+        }
+
+        ScaledDoubleDouble[] values = [.. bounds];
+        Doubled.SolveRight(values);
+        return values;
+    }
+
+    /// <summary>
+    /// The largest relative difference of the two sides of the equations, re-computed from the given terms of the members and from values of
+    /// all states of the chain.
+    /// </summary>
+    internal double Residual(ScaledDoubleDouble[] given, ScaledDoubleDouble[] values) =>
+        _chain.Matrix.OnRates<double, FirstStepResidual>(new FirstStepResidual(_members, given, values));
+
+    /// <summary>The same with one given term for all members.</summary>
+    internal double Residual(double given, double[] values) => Residual(
+        Array.ConvertAll(_members, _ => (ScaledDoubleDouble)given), Array.ConvertAll(values, value => double.IsFinite(value) ? (ScaledDoubleDouble)value : default));
+
+    /// <summary>The same for y · A = given: the largest relative difference between y · outflow and given + what flows in.</summary>
+    internal double LeftResidual(ScaledDoubleDouble[] given, double[] solution)
+    {
+        var inflows = new ScaledDoubleDouble[_chain.StateCount];
+        var outflows = new ScaledDoubleDouble[_members.Length];
+        for (var k = 0; k < _members.Length; k++)
+        {
+            inflows[_members[k]] += given[k];
+            foreach (var (to, rate) in _chain.Matrix.Row(_members[k]))
+            {
+                if (to != _members[k])
+                {
+                    var flow = (ScaledDoubleDouble)solution[k] * rate;
+                    outflows[k] += flow;
+                    inflows[to] += flow;
+                }
+            }
+        }
+
+        return Enumerable.Range(0, _members.Length)
+            .Max(k => outflows[k].IsZero ? 0 : Math.Abs((inflows[_members[k]] / outflows[k]).ToDouble() - 1));
+    }
+
+    private VisitTable InverseDoubled(double unit)
+    {
+        var count = _members.Length;
+        var values = new double[count * count];
+        var bound = 0.0;
+        for (var column = 0; column < count; column++)
+        {
+            _options.CancellationToken.ThrowIfCancellationRequested();
+            var given = new ScaledDoubleDouble[count];
+            given[column] = unit;
+            Doubled.SolveRight(given);
+            var solution = DoubledSolution(given).ToDoubles(_chain.States, _members, Messages.VisitsOutOfRange);
+            bound = solution.RelativeErrorBound;
+            for (var row = 0; row < count; row++)
+            {
+                values[(row * count) + column] = solution.Values[row];
+            }
+        }
+
+        return new VisitTable(count, values, ErrorBasis.DoubledElimination, bound);
     }
 
     private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
@@ -102,17 +221,45 @@ internal sealed class ExitSystem<TState> : IDisposable
         return rate;
     }
 
-    /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
-    private ExitSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere, Func<object, long, string> outOfRange)
+    private static bool TryConvert(ScaledDoubleDouble[] given, out double[] doubles)
     {
-        var mustProve = _options.CertificateLevel == CertificateLevel.Proof;
-        var fast = _staysInRange ? SolveFast(Array.ConvertAll(given, value => value.ToDouble()), elsewhere, mustProve) : null;
-        return fast is not null && (!mustProve || fast.RelativeErrorBound <= DoubledElimination.GoodEnough || _members.Length > DoubledElimination.MostStates)
-            ? fast
-            : SolveDoubled(given, outOfRange);
+        doubles = Array.ConvertAll(given, value => value.ToDouble());
+        for (var k = 0; k < given.Length; k++)
+        {
+            if (!given[k].IsZero && !double.IsNormal(doubles[k]))
+            {
+                return false;
+            }
+        }
+
+        return true;
     }
 
-    private ExitSolution? SolveFast(double[] given, double[] elsewhere, bool mustProve)
+    /// <summary>Whether a proof is asked for that this bound does not give, of a system small enough to be reduced once more for it.</summary>
+    private bool MustDouble(double bound) =>
+        _options.CertificateLevel == CertificateLevel.Proof && !(bound <= DoubledElimination.GoodEnough) && _members.Length <= DoubledElimination.MostStates;
+
+    /// <summary>From the fastest way to the most careful; each is left for the next where it cannot do what is asked.</summary>
+    private WideSolution Solve(ScaledDoubleDouble[] given, double[] elsewhere)
+    {
+        var fast = _staysInRange && TryConvert(given, out var doubles) ? SolveFast(doubles, elsewhere) : null;
+        if (fast is not null && !MustDouble(fast.RelativeErrorBound))
+        {
+            return new WideSolution(Array.ConvertAll(fast.Values, value => (ScaledDoubleDouble)value), fast.Basis, fast.RelativeErrorBound, fast.RelativeErrorBound);
+        }
+
+        ScaledDoubleDouble[] solution = [.. given];
+        Doubled.SolveRight(solution);
+        return DoubledSolution(solution);
+    }
+
+    private WideSolution DoubledSolution(ScaledDoubleDouble[] values) => new(
+        values,
+        ErrorBasis.DoubledElimination,
+        DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges),
+        DoubledElimination.WideErrorBound(_rates.Rows, _rates.Columns, _merges));
+
+    private ExitSolution? SolveFast(double[] given, double[] elsewhere)
     {
         var solution = given.AsSpan().ToArray();
         if (!ReductionSolve.SolveRight(_table.View, _sums, _members.Length, solution))
@@ -120,8 +267,8 @@ internal sealed class ExitSystem<TState> : IDisposable
             return null;
         }
 
-        var bound = ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
-        if (!mustProve || !(bound < 1))
+        var bound = SolveError;
+        if (_options.CertificateLevel != CertificateLevel.Proof || !(bound < 1))
         {
             return new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
         }
@@ -140,24 +287,6 @@ internal sealed class ExitSystem<TState> : IDisposable
         return refined < bound
             ? new ExitSolution(Array.ConvertAll(_members, member => values[member]), ErrorBasis.RefinedMonotone, refined)
             : new ExitSolution(solution, ErrorBasis.SubtractionFree, bound);
-    }
-
-    private ExitSolution SolveDoubled(ScaledDoubleDouble[] given, Func<object, long, string> outOfRange)
-    {
-        _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
-        ScaledDoubleDouble[] solution = [.. given];
-        _doubled.SolveRight(solution);
-        var values = Array.ConvertAll(solution, value => value.ToDouble());
-        for (var k = 0; k < values.Length; k++)
-        {
-            if (!solution[k].IsZero && !double.IsNormal(values[k]))
-            {
-                var state = _chain.States[_members[k]];
-                throw new NumericalRangeException(outOfRange(state, solution[k].Exponent), Text.Label(state));
-            }
-        }
-
-        return new ExitSolution(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
     }
 
     private readonly struct Refinement(

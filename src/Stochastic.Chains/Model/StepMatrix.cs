@@ -1,6 +1,6 @@
 using Stochastic.Chains.Kernels;
 
-namespace Stochastic.Chains.Steps;
+namespace Stochastic.Chains;
 
 /// <summary>
 /// The matrix that a step multiplies with: the off-diagonal probabilities as given; where a stay was given, max(0, 1 − their sum) on
@@ -33,6 +33,9 @@ internal sealed class StepMatrix
     internal static StepMatrix Of<TState>(Chain<TState> chain)
         where TState : notnull => chain.Derive(static chain => new StepMatrix(chain.Matrix));
 
+    /// <summary>The number of states.</summary>
+    internal int Size => _sums.Length;
+
     /// <summary>The largest number of moves, stays included, that lead into one state.</summary>
     internal int LargestIndegree { get; }
 
@@ -44,6 +47,9 @@ internal sealed class StepMatrix
 
     /// <summary>The smallest positive probability of a step.</summary>
     internal double SmallestProbability { get; private set; }
+
+    /// <summary>The probability that a step stays in a state, before its row is divided by its sum.</summary>
+    internal double Stay(int state) => _stays[state];
 
     /// <summary>Multiplies a distribution with the chain: target = source · P. Rows of probability zero are skipped.</summary>
     internal void Multiply(ReadOnlySpan<double> source, Span<double> target)
