@@ -78,7 +78,11 @@ internal sealed class StepMatrix
         for (var row = 0; row < _matrix.Size; row++)
         {
             var target = table.Row(row, 0, _matrix.Size);
-            if (!_matrix.TryCopyDenseRow(row, target))
+            if (_matrix.TryGetDenseRow(row, out var given))
+            {
+                given.CopyTo(target);
+            }
+            else
             {
                 target.Clear();
                 foreach (var (column, probability) in _matrix.Row(row))
