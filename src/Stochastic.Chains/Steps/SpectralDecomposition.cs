@@ -74,7 +74,8 @@ public sealed class SpectralDecomposition<TState> : ICertified
 
     /// <summary>
     /// Gets whether the chain is reversible and without transient states, so that the symmetric matrix D^½ P D^−½ with D the long-run
-    /// shares was decomposed: eigenvalues are real, and D^½ times the right vectors are orthogonal.
+    /// shares was decomposed: eigenvalues are real, and D^½ times the right vectors are orthogonal. Not done where the shares of a class
+    /// differ by more than a factor of 10¹², which would cost their vectors too many digits.
     /// </summary>
     public bool HasOrthogonalVectors { get; }
 

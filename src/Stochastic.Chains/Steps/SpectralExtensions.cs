@@ -16,7 +16,7 @@ public static class SpectralExtensions
     /// <exception cref="MemoryLimitException">The chain has too many states for full matrices.</exception>
     /// <exception cref="ConvergenceException">The iteration did not separate all eigenvalues within its cap.</exception>
     /// <remarks>
-    /// A reversible chain without transient states takes the symmetric form, any other the real Schur form. Self-loops are one minus the sum of the
+    /// A reversible chain without transient states takes the symmetric form, any other (and one whose shares differ by more than 10¹²) the real Schur form. Self-loops are one minus the sum of the
     /// other moves of a row, as for all steps. O(states³) time and about 100 states² bytes.
     /// </remarks>
     /// <example><code>double relaxation = chain.Spectrum().RelaxationTime;</code></example>
@@ -47,7 +47,7 @@ public static class SpectralExtensions
             Method = method,
             Reason = outcome.IsSymmetric
                 ? "Reversible and without transient states: the symmetric form has orthogonal vectors."
-                : "Not reversible, or with transient states: the real Schur form of the matrix.",
+                : "Not reversible, with transient states, or with shares too far apart: the real Schur form of the matrix.",
             Iterations = outcome.Sweeps,
         };
         if (outcome.Factors is not { } factors)

@@ -7,12 +7,12 @@ namespace Stochastic.Chains.Steps;
 internal static class SpectralSolve
 {
     /// <summary>
-    /// Flows that balance this closely count as balanced; what is missed shows in the residuals. Shares that differ by more than the ratio
-    /// would leave the range of a double.
+    /// Flows that balance this closely count as balanced; what is missed shows in the residuals. Where shares differ by more than the ratio,
+    /// orthogonal vectors are of no use: small entries that rounding takes from them are large ones of right or left vectors.
     /// </summary>
     private const double BalanceTolerance = 1e-14;
     private const double CloseToOne = 1e-6;
-    private const double SmallestRatio = 1e-280;
+    private const double SmallestRatio = 1e-12;
 
     internal static SpectralOutcome Run<TState>(Chain<TState> chain, double[] step, CancellationToken cancellation)
         where TState : notnull

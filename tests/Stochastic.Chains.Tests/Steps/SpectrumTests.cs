@@ -118,7 +118,7 @@ public class SpectrumTests
     [Fact]
     public void Reversible_chains_take_the_symmetric_form_and_others_do_not()
     {
-        ChainFamilies.Named("birth-death").Create(8, 1).ToChain().Spectrum().HasOrthogonalVectors.Should().BeTrue();
+        ChainFamilies.Named("reflecting path").Create(8, 1).ToChain().Spectrum().HasOrthogonalVectors.Should().BeTrue();
         ChainFamilies.Named("random dense").Create(8, 1).ToChain().Spectrum().HasOrthogonalVectors.Should().BeFalse();
         ChainFamilies.Named("absorbing path").Create(8, 1).ToChain().Spectrum().HasOrthogonalVectors.Should().BeFalse();
         ChainFamilies.Named("identity").Create(4, 1).ToChain().Spectrum().IsDiagonalizable.Should().BeTrue();
