@@ -28,6 +28,9 @@ checks.Figure("crates after a week", crates.Expected(1, "clean"), (100 * 0.9 * 0
 checks.Figure("chance of none at the shop", pool.StartingWith(("clean", 2)).Forecast(1).Count(1, "at shop").AtMost(0), 0.04);
 checks.Figure("lost in the end", pool.LongRun()["clean", "lost"], 0.02 / 0.0298);
 checks.Figure("lost in the end, one start", pool.StartingIn("clean").LongRun()["lost"], 0.02 / 0.0298);
+NStepMatrix<string> fourWeeks = pool.NStep(4).Require(relativeError: 1e-12);
+checks.Figure("clean after four weeks, from the matrix", fourWeeks["dirty", "clean"], 0.36298);
+checks.Figure("the same from the spectrum", pool.Spectrum().NStep("dirty", 4)["clean"], 0.36298);
 
 Absorption<string> ends = pool.Absorption().Require(relativeError: 1e-12);
 checks.Figure("ends up lost", ends.Probability("clean", "lost"), 0.02 / 0.0298);

@@ -35,4 +35,10 @@ public enum ErrorBasis
 
     /// <summary>The sum of what is left unbalanced, over how much closer a step brings any two distributions. A proof for the sum of all errors.</summary>
     Contraction,
+
+    /// <summary>
+    /// What computed eigenvectors leave of their equations and of the identity, times the entries of their inverse (after Bauer &amp; Fike
+    /// 1960). A proof, for each entry.
+    /// </summary>
+    SpectralResidual,
 }

@@ -12,4 +12,6 @@ internal static partial class Messages
     internal static string SchurFormUnfinished(int unresolved, int order, int sweeps) =>
         $"{Text.Count(unresolved)} of {Text.Count(order, "eigenvalue", "eigenvalues")} had not separated after {Text.Count(sweeps, "QR sweep", "QR sweeps")}. " +
         "Check HasConverged before asking for eigenvalues or eigenvectors.";
+
+    internal const string AskSquaring = "Ask NStep for powers: repeated squaring needs no eigenvalues.";
 }

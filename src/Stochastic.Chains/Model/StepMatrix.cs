@@ -29,6 +29,10 @@ internal sealed class StepMatrix
         LargestIndegree = indegrees.Max();
     }
 
+    /// <summary>The matrix of a chain, made once and kept with it.</summary>
+    internal static StepMatrix Of<TState>(Chain<TState> chain)
+        where TState : notnull => chain.Derive(static chain => new StepMatrix(chain.Matrix));
+
     /// <summary>The number of states.</summary>
     internal int Size => _sums.Length;
 
@@ -83,6 +87,33 @@ internal sealed class StepMatrix
             }
 
             target[row] = sum / _sums[row];
+        }
+    }
+
+    /// <summary>
+    /// Writes the matrix into a table. An entry is off by at most <see cref="StayRoundings"/> + 4 roundings: one or two for the sum, one for
+    /// the division by it, and those of a stay.
+    /// </summary>
+    internal void CopyTo(MatrixView table)
+    {
+        for (var row = 0; row < _matrix.Size; row++)
+        {
+            var target = table.Row(row, 0, _matrix.Size);
+            if (_matrix.TryGetDenseRow(row, out var given))
+            {
+                given.CopyTo(target);
+            }
+            else
+            {
+                target.Clear();
+                foreach (var (column, probability) in _matrix.Row(row))
+                {
+                    target[column] = probability;
+                }
+            }
+
+            target[row] = _stays[row];
+            VectorLoops.Divide(target, _sums[row], target);
         }
     }
 

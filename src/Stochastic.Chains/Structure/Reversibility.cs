@@ -71,7 +71,7 @@ public sealed class Reversibility<TState>
     /// Gives each state of a class the weight that balances the flows along a breadth-first spanning tree. Moves without a way back
     /// are left out; a state reached only by such moves keeps weight zero, and the check of its moves then fails.
     /// </summary>
-    private static void SpreadWeights(TransitionMatrix matrix, int root, ScaledDouble[] weights)
+    internal static void SpreadWeights(TransitionMatrix matrix, int root, ScaledDouble[] weights)
     {
         weights[root] = ScaledDouble.One;
         var waiting = new Queue<int>();

@@ -27,7 +27,10 @@ internal static class LibraryAnswers
             ["substochastic_radius"] = query => [(query.Scalar(), 1 - query.Chain().ToChain().QuasiStationary().DecayRate)],
             ["absorption_variance"] = query => query.Vector().Zip(Transient(query, Variances(query.Chain().ToChain().Absorption().Steps))),
             ["nstep_row"] = query => query.Vector().Zip(After(query, query.IntegerArgument("start"), Steps(query))),
-            ["nstep_matrix"] = query => query.Matrix().SelectMany((row, start) => row.Zip(After(query, start, query.IntegerArgument("n")))),
+            ["nstep_matrix"] = query => query.Matrix().SelectMany((row, start) => row.Zip(NStep(query).Row(start).ToArray())),
+            ["eigenvalues"] = query => query.Vector().OrderBy(number => number.Value).Zip(Eigenvalues(query).Order()),
+            ["second_eigenvalue"] = query => [(query.Scalar(), query.Chain().ToChain().Spectrum().SubdominantEigenvalue!.Value.Real)],
+            ["relaxation_time"] = query => [(query.Scalar(), query.Chain().ToChain().Spectrum().RelaxationTime)],
             ["nstep_distribution"] = NStepDistribution,
             ["nstep_row_nonzeros"] = query => query.Matrix().Select(pair =>
                 (pair[1], After(query, query.IntegerArgument("start"), query.IntegerArgument("n"))[(int)pair[0].Value.ToDouble()])),
@@ -41,6 +44,24 @@ internal static class LibraryAnswers
             ["total_variation_worst"] = TotalVariationWorst,
             ["total_variation"] = query => query.Vector().Zip(query.States("n").Select(steps => Distance(query, steps))),
         };
+
+    /// <summary>Kinds of questions whose answers are right to an absolute error, because they come of subtractions.</summary>
+    public static IReadOnlySet<string> Absolute { get; } = new HashSet<string> { "total_variation", "total_variation_worst", "eigenvalues", "second_eigenvalue" };
+
+    private static NStepMatrix<int> NStep(PublishedQuery query) => query.Chain().ToStepChain().NStep(query.IntegerArgument("n"));
+
+    /// <summary>Where the source lists each distinct eigenvalue with its multiplicity, one of each group.</summary>
+    private static IEnumerable<double> Eigenvalues(PublishedQuery query)
+    {
+        var computed = query.Chain().ToChain().Spectrum().Eigenvalues.Select(value => value.Real).Order().ToArray();
+        if (!query.HasArgument("multiplicities"))
+        {
+            return computed;
+        }
+
+        var groups = query.States("multiplicities");
+        return groups.Select((count, group) => computed.Skip(groups.Take(group).Sum()).Take(count)).SelectMany(group => group.Take(1));
+    }
 
     private static double[] Stationary(PublishedQuery query) => query.Chain().ToChain().Stationary().ToArray();
 
