@@ -44,6 +44,9 @@ checks.Holds("the certificate is a proof", shares.Certificate.IsProof);
 checks.Figure("share failed, linear system", pump.Stationary(new LinearSystemMethod())[Stage.Failed], 1.0 / 15);
 checks.Figure("share failed, aggregation", pump.Stationary(new AggregationMethod())[Stage.Failed], 1.0 / 15);
 checks.Figure("weeks until failed", pump.TimeTo(Stage.Failed).Mean(Stage.New), 14);
+FirstPassageTable<Stage> passages = pump.MeanFirstPassage().Require(relativeError: 1e-12);
+checks.Figure("weeks between failures", passages[Stage.Failed, Stage.Failed], 15);
+checks.Figure("Kemeny's constant", passages.KemenyConstant, 54.0 / 15);
 checks.Holds("tables can be printed", shares.ToString().Contains("Failed", StringComparison.Ordinal));
 
 // Two pumps, either of which is enough, one repair crew; moves per hour.
