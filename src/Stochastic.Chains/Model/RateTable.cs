@@ -43,10 +43,11 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
     /// <summary>Writes the rates into a table of doubles.</summary>
     internal void CopyTo(MatrixView table)
     {
+        var isWhole = rows.Length == matrix.Size && rows.AsSpan().SequenceEqual(Enumerable.Range(0, matrix.Size).ToArray());
         for (var row = 0; row < rows.Length; row++)
         {
             var target = table.Row(row, 0, columns);
-            if (rows.Length == matrix.Size && matrix.TryCopyDenseRow(row, target))
+            if (isWhole && matrix.TryCopyDenseRow(row, target))
             {
                 continue; // all states in their own order, and the diagonal is never read
             }
