@@ -11,9 +11,6 @@ namespace Stochastic.Chains.Kernels;
 /// </remarks>
 internal sealed class FirstPassageReduction : IDisposable
 {
-    private const int ScratchRows = PassageElimination.LargestBase;
-
-    private readonly WorkTable _scratch;
     private readonly PooledBuffer _memory;
     private readonly GuardedProduct _product;
     private readonly PassageElimination _elimination;
@@ -21,14 +18,13 @@ internal sealed class FirstPassageReduction : IDisposable
 
     private FirstPassageReduction(int states, int kept, InstructionSet instructions, WorkSharing sharing, Action<double>? progress)
     {
-        _scratch = WorkTable.Rent(ScratchRows, states + 1);
         _memory = PooledBuffer.Rent(checked((int)SizeFor(states, kept)));
         _product = new GuardedProduct(states, instructions, sharing, progress is null ? null : made => progress(Math.Min(1, made / WorkOf(states))));
-        _elimination = new PassageElimination(_product, _scratch.View);
+        _elimination = new PassageElimination(_product);
     }
 
     /// <summary>The numbers of working memory that a table of so many states takes, its input and result not counted.</summary>
-    internal static long MemoryOf(int states, int kept) => SizeFor(states, kept) + (ScratchRows * (states + 16L));
+    internal static long MemoryOf(int states, int kept) => SizeFor(states, kept);
 
     /// <summary>
     /// Writes the mean time from each state (row) to each of the first <paramref name="kept"/> states (column), zero to itself. Moves lead
@@ -62,11 +58,7 @@ internal sealed class FirstPassageReduction : IDisposable
     }
 
     /// <summary>Gives all working memory back to the pool.</summary>
-    public void Dispose()
-    {
-        _scratch.Dispose();
-        _memory.Dispose();
-    }
+    public void Dispose() => _memory.Dispose();
 
     /// <summary>About how many multiply-adds a table of so many states takes: 10/9 n³.</summary>
     private static double WorkOf(int states) => 10.0 / 9 * states * states * states;

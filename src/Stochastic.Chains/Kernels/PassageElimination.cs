@@ -10,17 +10,16 @@ namespace Stochastic.Chains.Kernels;
 /// time, with the sum of everything right of them as one further column. About m³/3 + m²·q multiply-adds for m states before q others,
 /// all but m·(48·q + 768) of them in matrix products.
 /// </remarks>
-internal sealed class PassageElimination(GuardedProduct product, MatrixView scratch)
+internal sealed class PassageElimination(GuardedProduct product)
 {
     /// <summary>The most states that are eliminated one by one.</summary>
-    internal const int LargestBase = 16;
+    internal const int LargestBase = InPlaceProduct.MostRows;
 
     /// <summary>Terms of a row sum that are added up together.</summary>
     internal const int SumChunk = 64;
 
     private const int TileColumns = 24;
     private const int SmallestForTiles = 4 * TileColumns;
-    private const int LargestWidth = (2 * LargestBase) + 1;
 
     /// <summary>Where a set of states is cut in two: whole tiles for large sets.</summary>
     internal static int Half(int states) => states < SmallestForTiles ? states / 2 : ((states / 2) + (TileColumns / 2)) / TileColumns * TileColumns;
@@ -69,15 +68,17 @@ internal sealed class PassageElimination(GuardedProduct product, MatrixView scra
     private bool EliminateBase(MatrixView table, int states, int others)
     {
         product.Cancellation.ThrowIfCancellationRequested();
-        Span<double> square = stackalloc double[LargestBase * LargestWidth];
-        Span<double> pivots = stackalloc double[LargestBase];
         var width = (2 * states) + 1;
-        square[..(states * width)].Clear();
+        Span<double> square = stackalloc double[states * width];
+        Span<double> pivots = stackalloc double[states];
+        Span<double> smallestRates = stackalloc double[states];
+        square.Clear();
         for (var row = 0; row < states; row++)
         {
             table.Row(row, 0, states).CopyTo(square[(row * width)..]);
             square[(row * width) + states] = Sum(table.Row(row, states, others));
             square[(row * width) + states + 1 + row] = 1;
+            smallestRates[row] = NormalRange.SmallestNonzero(table.Row(row, states, others + 1));
         }
 
         if (!Forward(square, states, pivots) || !Backward(square, states, pivots))
@@ -85,15 +86,16 @@ internal sealed class PassageElimination(GuardedProduct product, MatrixView scra
             return false;
         }
 
+        var visits = square[(states + 1)..];
+        Span<double> smallestVisits = stackalloc double[states];
+        smallestVisits.Fill(double.PositiveInfinity);
         for (var row = 0; row < states; row++)
         {
-            square.Slice((row * width) + states + 1, states).CopyTo(table.Row(row, 0, states));
-            var target = table.Row(row, states, others + 1);
-            target.CopyTo(scratch.Row(row, 0, others + 1));
-            target.Clear();
+            NormalRange.LowerToNonzero(visits.Slice(row * width, states), smallestVisits);
         }
 
-        product.Add(table, scratch, table.From(0, states), states, states, others + 1);
+        product.Note(NormalRange.KeepsProducts(smallestVisits, smallestRates));
+        InPlaceProduct.Multiply(visits, width, table.From(0, states), states, others + 1);
         return true;
     }
 
@@ -139,7 +141,7 @@ internal sealed class PassageElimination(GuardedProduct product, MatrixView scra
     private bool Backward(Span<double> square, int states, Span<double> pivots)
     {
         var width = (2 * states) + 1;
-        Span<double> smallest = stackalloc double[LargestBase];
+        Span<double> smallest = stackalloc double[states];
         for (var state = states - 1; state >= 0; state--)
         {
             var visits = square.Slice((state * width) + states + 1, states);

@@ -44,10 +44,11 @@ internal sealed class PassageSystem : IDisposable
             numberOf[states[k]] = k;
         }
 
+        var isWhole = IsWhole(states, matrix.Size);
         for (var k = 0; k < states.Length; k++)
         {
             var row = system.Rates.Row(k, 0, states.Length + 1);
-            if (!IsWhole(states, matrix.Size) || !matrix.TryCopyDenseRow(k, row[..^1]))
+            if (!isWhole || !matrix.TryCopyDenseRow(k, row[..^1]))
             {
                 row.Clear();
                 foreach (var (to, rate) in matrix.Row(states[k]))
