@@ -72,7 +72,7 @@ public sealed class FirstPassageTable<TState> : ICertified
     public double KemenyErrorBound => Kemeny.RelativeErrorBound;
 
     /// <summary>
-    /// Gets by how much, relative to itself, Kemeny's constant differs between the starts it is computed from: rounding, and never more than
+    /// Gets by how much, relative to itself, Kemeny's constant differs between the starts it is computed from: rounding, and hardly more than
     /// twice the bound. A check that owes nothing to the bound.
     /// </summary>
     /// <exception cref="ChainStructureException">There are several recurrent classes.</exception>
