@@ -26,6 +26,13 @@ checks.Figure("ends up lost", ends.Probability("clean", "lost"), 0.02 / 0.0298);
 checks.Figure("weeks until the end", ends.MeanSteps("clean"), 4.279 / 0.0298);
 checks.Figure("weeks until lost or scrapped", pool.TimeToAny(["lost", "scrapped"]).Mean("clean"), 4.279 / 0.0298);
 
+checks.Figure("weeks at a shop", ends.ExpectedVisits("clean", "at shop"), 2 / 0.0298);
+checks.Holds("the end can be given", ends.Conditional("lost").States.Count == 5 && ends.StepsIfInto("lost").Mean("clean") > 0);
+checks.Holds("a deviation is near the mean where ends are rare", Math.Abs((ends.StandardDeviationOfSteps("clean") / ends.MeanSteps("clean")) - 1) < 0.1);
+checks.Holds("half are gone before the mean", ends.Steps.Quantile("clean", 0.5) < ends.MeanSteps("clean"));
+checks.Figure("repaired before lost", pool.Before("in repair", "lost").Probability("at shop"), 0.98 * 0.05 / (0.02 + (0.98 * 0.05)));
+checks.Holds("those still in settle", pool.QuasiStationary().DecayRate is > 0.006 and < 0.008);
+
 HittingTimes<string> untilLost = pool.TimeTo("lost");
 checks.Holds("may never be lost", double.IsPositiveInfinity(untilLost.Mean("clean")));
 checks.Figure("ever lost", untilLost.ReachingProbability("clean"), 0.02 / 0.0298);

@@ -47,6 +47,7 @@ internal static class HowLongBetweenAll
 
         Console.WriteLine($"The table is proved to {(times.Certificate.RelativeErrorBound <= 1e-12 ? "twelve" : "fewer")} digits");
         Console.WriteLine($"The column is proved to {(column.Certificate.RelativeErrorBound <= 5e-16 ? "almost the last digit" : "fewer digits")}");
+        Console.WriteLine($"Standard deviation from new: {column.StandardDeviation(Stage.New):F2} weeks");
         #endregion
     }
 

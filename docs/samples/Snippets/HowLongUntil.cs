@@ -46,4 +46,47 @@ internal static class HowLongUntil
         Console.WriteLine($"Proved to twelve digits: {untilNoneRuns.Certificate is { IsProof: true, RelativeErrorBound: <= 1e-12 }}");
         #endregion
     }
+
+    public static void IfReached()
+    {
+        var pool = InventedChains.Pool;
+        #region if-reached
+        HittingTimes<string> untilLost = pool.TimeTo("lost");
+
+        Console.WriteLine($"Those that get lost are in the pool for {untilLost.MeanIfReached("clean"):F1} weeks on average");
+        #endregion
+    }
+
+    public static void Spread()
+    {
+        var pump = InventedChains.Pump;
+        #region spread
+        HittingTimes<Stage> untilFailed = pump.TimeTo(Stage.Failed);
+        PassageTimeDistribution<Stage> times = untilFailed.Distribution(Stage.New, maxSteps: 52);
+
+        Console.WriteLine($"Mean {untilFailed.Mean(Stage.New):F1}, standard deviation {untilFailed.StandardDeviation(Stage.New):F1} weeks");
+        Console.WriteLine($"One in ten fails within {untilFailed.Quantile(Stage.New, 0.1)} weeks, half within {untilFailed.Quantile(Stage.New, 0.5)}");
+        Console.WriteLine($"Still running after a year: {times.SurvivalProbability(52):P2}");
+        #endregion
+    }
+
+    public static void Visits()
+    {
+        var pool = InventedChains.Pool;
+        #region visits
+        ExpectedVisits<string> life = pool.TimeToAny(["lost", "scrapped"]).VisitsFrom("clean");
+
+        Console.WriteLine($"Weeks at a shop: {life["at shop"]:F1}, in repair: {life["in repair"]:F2}");
+        #endregion
+    }
+
+    public static void Before()
+    {
+        var pool = InventedChains.Pool;
+        #region before
+        FirstOfTwo<string> race = pool.Before("in repair", "lost");
+
+        Console.WriteLine($"A clean crate is repaired before it is lost: {race.Probability("clean"):P1}");
+        #endregion
+    }
 }

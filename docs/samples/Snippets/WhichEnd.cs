@@ -44,4 +44,40 @@ internal static class WhichEnd
         Console.WriteLine($"{pool.TimeTo("in repair").ReachingProbability("clean"):P1}");
         #endregion
     }
+
+    public static void Visits()
+    {
+        var pool = InventedChains.Pool;
+        #region visits
+        Absorption<string> ends = pool.Absorption();
+
+        Console.WriteLine($"A clean crate leaves after {ends.MeanSteps("clean"):F1} weeks, give or take {ends.StandardDeviationOfSteps("clean"):F1}");
+        Console.WriteLine($"It spends {ends.ExpectedVisits("clean", "dirty"):F1} of them dirty");
+        Console.WriteLine($"One in twenty is gone within {ends.Steps.Quantile("clean", 0.05)} weeks");
+        #endregion
+    }
+
+    public static void Given()
+    {
+        var pool = InventedChains.Pool;
+        #region given
+        Absorption<string> ends = pool.Absorption();
+        Chain<string> thoseScrapped = ends.Conditional("scrapped");
+
+        Console.WriteLine($"Weeks of those that are lost: {ends.StepsIfInto("lost").Mean("clean"):F1}");
+        Console.WriteLine($"Weeks of those that are scrapped: {ends.StepsIfInto("scrapped").Mean("clean"):F1}");
+        Console.WriteLine($"Of those that are scrapped, dirty ones go into repair: {thoseScrapped["dirty", "in repair"]:P1}");
+        #endregion
+    }
+
+    public static void StillIn()
+    {
+        var pool = InventedChains.Pool;
+        #region still-in
+        QuasiStationaryDistribution<string> inUse = pool.QuasiStationary();
+
+        Console.WriteLine($"Of those still in, {inUse["dirty"]:P1} are dirty");
+        Console.WriteLine($"Every week {inUse.DecayRate:P2} of them leave for good");
+        #endregion
+    }
 }

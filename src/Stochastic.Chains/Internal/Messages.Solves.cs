@@ -19,6 +19,39 @@ internal static partial class Messages
     internal static string ProbabilityOutOfRange(object state, long exponent) =>
         $"The probability from {Text.Quoted(state)} is about 10^{Power(exponent)}, smaller than a double can hold. Treat the end as impossible in practice.";
 
+    internal static string MomentOutOfRange(object state, long exponent) =>
+        $"The figure of the time from {Text.Quoted(state)} is about 10^{Power(exponent)}, outside what a double can hold. Ask for the standard deviation instead.";
+
+    internal static string VisitsOutOfRange(object state, long exponent) =>
+        $"The mean number of visits to {Text.Quoted(state)} is about 10^{Power(exponent)}, outside what a double can hold.";
+
+    internal static string BeyondHorizon(int steps, int horizon) =>
+        $"The distribution was computed for 0 to {Text.Count(horizon)} steps; {Text.Count(steps)} was asked for. Ask for a longer horizon.";
+
+    internal static string TimedChainHasNoSteps(double rate) =>
+        $"The chain was made from rates, so its time is not counted in steps (it makes {Text.Short(rate)} of them per unit of time on average, stays included). " +
+        "Ask MakeAbsorbing(targets).StartingIn(from).AfterTime(t) for the probability of having arrived by a time.";
+
+    internal static string ProbabilityBetweenZeroAndOne(double value) => $"The probability is {Text.Number(value)}. Give a number above 0 and below 1.";
+
+    internal static string OnBothSides(object state) => $"{Text.Quoted(state)} is on both sides, so neither can come first. Name different states.";
+
+    internal static string RecurrentVisits(object state) =>
+        $"{Text.Quoted(state)} is recurrent: once entered it is visited for ever. Ask Stationary() or StationaryPerClass() for its long-run share.";
+
+    internal static string ConditionalTooSmall(object from, object to) =>
+        $"The move from {Text.Quoted(from)} to {Text.Quoted(to)} becomes less likely than a double can hold once the end is given. Leave it out of the chain first.";
+
+    internal const string NoTransientStates = "The chain has no transient states, so its fundamental matrix is empty and there is nothing to copy.";
+
+    internal const string NothingToLeave = "The chain has no transient states: nothing is left for good. Ask Stationary() for the long-run shares.";
+
+    internal static string SeveralSlowestClasses(object first, object second) =>
+        $"The classes of {Text.Quoted(first)} and {Text.Quoted(second)} are left equally slowly, so where things stand depends on the start for ever. " +
+        "Ask StartingIn(…).After(n) for a given start.";
+
+    internal const string SlowQuasiStationary = "Two parts of the transient states are left almost equally slowly. Ask StartingIn(…).After(n) for a given start.";
+
     internal const string NoTargets = "No target states are given. Name at least one.";
 
     internal static string TransientEnd(object state) =>

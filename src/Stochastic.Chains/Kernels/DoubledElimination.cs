@@ -24,11 +24,18 @@ internal static class DoubledElimination
     private const double SmallestProduct = 1.1830521861667747e-271;
     private const double LargestNumber = 1 / SmallestProduct;
 
-    /// <summary>The bound on the relative error of an answer after it was rounded to a double: little more than u.</summary>
-    internal static double RelativeErrorBound(int pivots, int columns, int merges)
+    /// <summary>The bound on the relative error of an answer in twice the precision; +∞ where it would be no better than one in double.</summary>
+    internal static double WideErrorBound(int pivots, int columns, int merges)
     {
         var roundings = SubtractionFreeBound.RoundingsOfElimination(pivots, columns, merges);
         var doubled = Upward.Multiply(roundings * SubtractionFreeBound.SecondOrder, ScaledDoubleDouble.OperationError);
+        return doubled <= UnitRoundoff ? doubled : double.PositiveInfinity;
+    }
+
+    /// <summary>The bound on the relative error of an answer after it was rounded to a double: little more than u.</summary>
+    internal static double RelativeErrorBound(int pivots, int columns, int merges)
+    {
+        var doubled = WideErrorBound(pivots, columns, merges);
         return doubled <= UnitRoundoff ? Upward.Add(UnitRoundoff, Upward.Multiply(doubled, 1 + (2 * UnitRoundoff))) : double.PositiveInfinity;
     }
 

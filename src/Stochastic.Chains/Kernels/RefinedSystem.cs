@@ -124,6 +124,11 @@ internal static class RefinedSystem
         var largest = 0.0;
         for (var k = 0; k < bounds.Length; k++)
         {
+            if (refinement.Highs[states[k]] == 0)
+            {
+                continue; // a sum without subtraction is zero only where every term is: nothing given can be reached, and the exact entry is zero
+            }
+
             var error = Upward.Divide(bounds[k], Upward.LowerDifference(1, solveError));
             var least = Upward.LowerDifference(refinement.Highs[states[k]] * (1 - (4 * Refinement.UnitRoundoff)), error);
             largest = least > 0 ? Math.Max(largest, Upward.Divide(error, least)) : double.PositiveInfinity;
@@ -148,7 +153,7 @@ internal static class RefinedSystem
     {
         foreach (var state in states)
         {
-            if (!double.IsNormal(Math.ScaleB(refinement.BestHighs[state], -scale)))
+            if (refinement.BestHighs[state] != 0 && !double.IsNormal(Math.ScaleB(refinement.BestHighs[state], -scale)))
             {
                 return double.PositiveInfinity;
             }

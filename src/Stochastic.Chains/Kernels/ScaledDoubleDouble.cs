@@ -97,6 +97,31 @@ internal readonly record struct ScaledDoubleDouble :
     /// </summary>
     internal double ToDouble(long scale = 0) => IsZero ? 0 : Math.ScaleB(High, (int)Math.Clamp((BlockBits * Block) + scale, -4000, 4000));
 
+    /// <summary>
+    /// The first minus the second number, or zero where that would be negative; off by at most <see cref="OperationError"/> of their sum.
+    /// </summary>
+    internal static ScaledDoubleDouble Difference(ScaledDoubleDouble first, ScaledDoubleDouble second)
+    {
+        if (second.IsZero || first.Block > second.Block + 1)
+        {
+            return first;
+        }
+
+        if (first.IsZero || first.Block < second.Block)
+        {
+            return default;
+        }
+
+        var scale = first.Block == second.Block ? 1 : BlockDown;
+        var (high, low) = DoubleDouble.Add(first.High, first.Low, -second.High * scale, -second.Low * scale);
+        return high > 0 ? Shifted(Normalized(high, low), first.Block) : default;
+    }
+
+    /// <summary>The square root as a double, off by at most 3/2 u of itself.</summary>
+    internal double SquareRoot() => IsZero ? 0 : Math.ScaleB(Math.Sqrt(High), (int)Math.Clamp(BlockBits / 2 * Block, -4000, 4000));
+
+    private static ScaledDoubleDouble Shifted(ScaledDoubleDouble number, long blocks) => new(number.High, number.Low, number.Block + blocks);
+
     private static ScaledDoubleDouble AddAcrossBlocks(ScaledDoubleDouble first, ScaledDoubleDouble second)
     {
         if (first.IsZero || second.IsZero)

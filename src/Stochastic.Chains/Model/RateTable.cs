@@ -12,6 +12,9 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
 {
     private const int DoubledBytes = 32;
 
+    /// <summary>Beyond so many runs, copying entry by entry is as fast.</summary>
+    private const int LongRunsAtMost = 16;
+
     internal int Rows => rows.Length;
 
     internal int Columns => columns;
@@ -40,16 +43,17 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
     /// <summary>The column that moves to a state go to; −1 when they are left out.</summary>
     internal int ColumnOf(int state) => columnOf[state];
 
-    /// <summary>Writes the rates into a table of doubles.</summary>
+    /// <summary>Writes the rates into a table of doubles. The diagonal may be written too, for it is never read.</summary>
     internal void CopyTo(MatrixView table)
     {
-        var isWhole = rows.Length == matrix.Size && rows.AsSpan().SequenceEqual(Enumerable.Range(0, matrix.Size).ToArray());
+        var runs = matrix.Storage == MatrixStorage.Dense ? ColumnRuns() : [];
         for (var row = 0; row < rows.Length; row++)
         {
             var target = table.Row(row, 0, columns);
-            if (isWhole && matrix.TryCopyDenseRow(row, target))
+            if (runs.Count is > 0 and <= LongRunsAtMost && matrix.TryGetDenseRow(rows[row], out var source))
             {
-                continue; // all states in their own order, and the diagonal is never read
+                CopyRuns(runs, source, target);
+                continue;
             }
 
             target.Clear();
@@ -95,5 +99,50 @@ internal sealed class RateTable(TransitionMatrix matrix, int[] rows, int[] colum
         }
 
         return table;
+    }
+
+    private void CopyRuns(List<(int From, int To, int Length)> runs, ReadOnlySpan<double> source, Span<double> target)
+    {
+        target[rows.Length..].Clear();
+        foreach (var (from, to, length) in runs)
+        {
+            if (to < rows.Length)
+            {
+                source.Slice(from, length).CopyTo(target[to..]);
+                continue;
+            }
+
+            for (var k = from; k < from + length; k++)
+            {
+                target[columnOf[k]] += source[k];
+            }
+        }
+    }
+
+    /// <summary>Runs of states whose columns follow each other like the states, and runs of exits.</summary>
+    private List<(int From, int To, int Length)> ColumnRuns()
+    {
+        var runs = new List<(int From, int To, int Length)>();
+        for (var state = 0; state < columnOf.Length; state++)
+        {
+            if (columnOf[state] < 0)
+            {
+                continue;
+            }
+
+            var isExit = columnOf[state] >= rows.Length;
+            var continues = runs.Count > 0 && runs[^1] is var last && last.From + last.Length == state &&
+                (isExit ? last.To >= rows.Length : last.To < rows.Length && last.To + last.Length == columnOf[state]);
+            if (continues)
+            {
+                runs[^1] = (runs[^1].From, runs[^1].To, runs[^1].Length + 1);
+            }
+            else
+            {
+                runs.Add((state, columnOf[state], 1));
+            }
+        }
+
+        return runs;
     }
 }

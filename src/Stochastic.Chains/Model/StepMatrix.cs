@@ -29,6 +29,9 @@ internal sealed class StepMatrix
         LargestIndegree = indegrees.Max();
     }
 
+    /// <summary>The number of states.</summary>
+    internal int Size => _sums.Length;
+
     /// <summary>The largest number of moves, stays included, that lead into one state.</summary>
     internal int LargestIndegree { get; }
 

@@ -108,16 +108,11 @@ internal sealed class TransitionMatrix
         ? new Components(new int[Size], 1)
         : OnGraph<Components, StronglyConnectedComponents>(default);
 
-    /// <summary>Copies a whole row, zeros and diagonal included, where the storage is dense.</summary>
-    internal bool TryCopyDenseRow(int row, Span<double> target)
+    /// <summary>A whole row, zeros and diagonal included, where the storage is dense.</summary>
+    internal bool TryGetDenseRow(int row, out ReadOnlySpan<double> values)
     {
-        if (_dense is null)
-        {
-            return false;
-        }
-
-        _dense.AsSpan(row * Size, Size).CopyTo(target);
-        return true;
+        values = _dense is null ? [] : _dense.AsSpan(row * Size, Size);
+        return _dense is not null;
     }
 
     /// <summary>Adds a multiple of a row, the diagonal included, to a distribution.</summary>

@@ -29,7 +29,24 @@ internal static class AbsorptionSolve<TState>
             Fill(system, chain, transient, ends.Count, probabilities, meanSteps, evidence);
         }
 
-        return new Absorption<TState>(chain.States, ends, endOf, probabilities, meanSteps, evidence.ToCertificate());
+        var certificate = evidence.ToCertificate();
+        return new Absorption<TState>(chain, ends, endOf, probabilities, StepsUntilEnd(chain, endOf, meanSteps, certificate, options), certificate, options);
+    }
+
+    private static HittingTimes<TState> StepsUntilEnd(Chain<TState> chain, int[] endOf, double[] meanSteps, Certificate certificate, SolveOptions options)
+    {
+        int[] recurrent = [.. Enumerable.Range(0, endOf.Length).Where(state => endOf[state] >= 0)];
+        var isEnd = Array.ConvertAll(endOf, end => end >= 0);
+        var split = new TargetSplit(isEnd, Array.ConvertAll(isEnd, end => !end), new bool[isEnd.Length]);
+        var certainly = new double[endOf.Length];
+        certainly.AsSpan().Fill(1);
+        return new HittingTimes<TState>(
+            new HittingQuestion<TState>(chain, recurrent, split, options),
+            chain.States,
+            Array.ConvertAll(recurrent, state => chain.States[state]),
+            meanSteps,
+            certainly,
+            certificate);
     }
 
     private static void Fill(

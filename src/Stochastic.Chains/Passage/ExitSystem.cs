@@ -47,6 +47,9 @@ internal sealed class ExitSystem<TState> : IDisposable
     /// <summary>A bound below 1 on the relative error of <see cref="SolveUpper"/>; +∞ when there is none.</summary>
     internal double SolveError => ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
 
+    /// <summary>A bound on the relative error of <see cref="SolveLeft"/>.</summary>
+    internal double LeftError => _doubled is null ? SolveError : DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges);
+
     /// <summary>Solves A · x = given, both over the members.</summary>
     internal WideSolution Solve(ScaledDoubleDouble[] given) => Solve(given, new double[_chain.StateCount]);
 
@@ -79,12 +82,58 @@ internal sealed class ExitSystem<TState> : IDisposable
         if (_staysInRange && TryConvert(given, out var solution) && (!MustDouble(bound)) &&
             ReductionSolve.SolveLeft(_table.View, _sums, _members.Length, solution))
         {
-            return new WideSolution(Array.ConvertAll(solution, value => (ScaledDoubleDouble)value), ErrorBasis.SubtractionFree, bound);
+            return new WideSolution(Array.ConvertAll(solution, value => (ScaledDoubleDouble)value), ErrorBasis.SubtractionFree, bound, bound);
         }
 
         ScaledDoubleDouble[] values = [.. given];
         Doubled.SolveLeft(values);
         return DoubledSolution(values);
+    }
+
+    /// <summary>The inverse of A, row-major over the members, divided by the steps per unit of time: mean numbers of visits between all pairs.</summary>
+    internal VisitTable Inverse()
+    {
+        var count = _members.Length;
+        _options.RequireMemory(count, 2 * sizeof(double) * (long)count * count);
+        var unit = 1 / (_chain.UniformizationRate ?? 1);
+        if (_staysInRange)
+        {
+            using var columns = WorkTable.Rent(count, count);
+            for (var k = 0; k < count; k++)
+            {
+                columns.View.Row(k, 0, count).Clear();
+                columns.View[k, k] = unit;
+            }
+
+            var sharing = new WorkSharing(_options.Parallelism, _options.CancellationToken);
+            if (ReductionSolve.SolveRight(_table.View, _sums, count, columns.View, count, InstructionSet.Widest, sharing))
+            {
+                var values = new double[count * count];
+                for (var k = 0; k < count; k++)
+                {
+                    columns.View.Row(k, 0, count).CopyTo(values.AsSpan(k * count));
+                }
+
+                return new VisitTable(count, values, ErrorBasis.SubtractionFree, SolveError);
+            }
+        }
+
+        return InverseDoubled(unit);
+    }
+
+    /// <summary>y · A = given in double where that is possible, in place; in twice the precision and rounded otherwise.</summary>
+    internal void IterateLeft(double[] values)
+    {
+        double[] trial = [.. values];
+        if (_staysInRange && ReductionSolve.SolveLeft(_table.View, _sums, _members.Length, trial))
+        {
+            trial.CopyTo(values, 0);
+            return;
+        }
+
+        var wide = Array.ConvertAll(values, value => (ScaledDoubleDouble)value);
+        Doubled.SolveLeft(wide);
+        Array.ConvertAll(wide, value => value.ToDouble()).CopyTo(values, 0);
     }
 
     /// <summary>
@@ -104,30 +153,59 @@ internal sealed class ExitSystem<TState> : IDisposable
     }
 
     /// <summary>
-    /// The largest relative difference of the two sides of the equations, re-computed from values of all states of the chain. The given
-    /// term of a member is <paramref name="given"/>; targets without a column do not count.
+    /// The largest relative difference of the two sides of the equations, re-computed from the given terms of the members and from values of
+    /// all states of the chain.
     /// </summary>
-    internal double Residual(double given, ReadOnlySpan<double> values)
+    internal double Residual(ScaledDoubleDouble[] given, ScaledDoubleDouble[] values) =>
+        _chain.Matrix.OnRates<double, FirstStepResidual>(new FirstStepResidual(_members, given, values));
+
+    /// <summary>The same with one given term for all members.</summary>
+    internal double Residual(double given, double[] values) => Residual(
+        Array.ConvertAll(_members, _ => (ScaledDoubleDouble)given), Array.ConvertAll(values, value => double.IsFinite(value) ? (ScaledDoubleDouble)value : default));
+
+    /// <summary>The same for y · A = given: the largest relative difference between y · outflow and given + what flows in.</summary>
+    internal double LeftResidual(ScaledDoubleDouble[] given, double[] solution)
     {
-        var largest = 0.0;
-        foreach (var member in _members)
+        var inflows = new ScaledDoubleDouble[_chain.StateCount];
+        var outflows = new ScaledDoubleDouble[_members.Length];
+        for (var k = 0; k < _members.Length; k++)
         {
-            var outflow = default(ScaledDouble);
-            var inflow = (ScaledDouble)given;
-            foreach (var (to, rate) in _chain.Matrix.Row(member))
+            inflows[_members[k]] += given[k];
+            foreach (var (to, rate) in _chain.Matrix.Row(_members[k]))
             {
-                if (to != member && _rates.ColumnOf(to) >= 0)
+                if (to != _members[k])
                 {
-                    outflow += rate;
-                    inflow += (ScaledDouble)rate * values[to];
+                    var flow = (ScaledDoubleDouble)solution[k] * rate;
+                    outflows[k] += flow;
+                    inflows[to] += flow;
                 }
             }
-
-            var ratio = values[member] > 0 ? (inflow / (outflow * values[member])).ToDouble() : inflow.IsZero ? 1 : 0;
-            largest = Math.Max(largest, Math.Abs(ratio - 1));
         }
 
-        return largest;
+        return Enumerable.Range(0, _members.Length)
+            .Max(k => outflows[k].IsZero ? 0 : Math.Abs((inflows[_members[k]] / outflows[k]).ToDouble() - 1));
+    }
+
+    private VisitTable InverseDoubled(double unit)
+    {
+        var count = _members.Length;
+        var values = new double[count * count];
+        var bound = 0.0;
+        for (var column = 0; column < count; column++)
+        {
+            _options.CancellationToken.ThrowIfCancellationRequested();
+            var given = new ScaledDoubleDouble[count];
+            given[column] = unit;
+            Doubled.SolveRight(given);
+            var solution = DoubledSolution(given).ToDoubles(_chain.States, _members, Messages.VisitsOutOfRange);
+            bound = solution.RelativeErrorBound;
+            for (var row = 0; row < count; row++)
+            {
+                values[(row * count) + column] = solution.Values[row];
+            }
+        }
+
+        return new VisitTable(count, values, ErrorBasis.DoubledElimination, bound);
     }
 
     private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
@@ -167,7 +245,7 @@ internal sealed class ExitSystem<TState> : IDisposable
         var fast = _staysInRange && TryConvert(given, out var doubles) ? SolveFast(doubles, elsewhere) : null;
         if (fast is not null && !MustDouble(fast.RelativeErrorBound))
         {
-            return new WideSolution(Array.ConvertAll(fast.Values, value => (ScaledDoubleDouble)value), fast.Basis, fast.RelativeErrorBound);
+            return new WideSolution(Array.ConvertAll(fast.Values, value => (ScaledDoubleDouble)value), fast.Basis, fast.RelativeErrorBound, fast.RelativeErrorBound);
         }
 
         ScaledDoubleDouble[] solution = [.. given];
@@ -175,8 +253,11 @@ internal sealed class ExitSystem<TState> : IDisposable
         return DoubledSolution(solution);
     }
 
-    private WideSolution DoubledSolution(ScaledDoubleDouble[] values) =>
-        new(values, ErrorBasis.DoubledElimination, DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges));
+    private WideSolution DoubledSolution(ScaledDoubleDouble[] values) => new(
+        values,
+        ErrorBasis.DoubledElimination,
+        DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges),
+        DoubledElimination.WideErrorBound(_rates.Rows, _rates.Columns, _merges));
 
     private ExitSolution? SolveFast(double[] given, double[] elsewhere)
     {

@@ -106,7 +106,7 @@ public sealed class FirstPassageTable<TState> : ICertified
 
     /// <summary>
     /// Computes the times to one state once more, refined in twice the precision, with a proof for that column that is as sharp as can be, and
-    /// with the probability of ever getting there.
+    /// with the probability of ever getting there and the standard deviations.
     /// </summary>
     /// <param name="to">The state to reach.</param>
     /// <returns>What <c>TimeTo</c> gives with the options of this table, at <see cref="CertificateLevel.Proof"/>; 0 at the state itself. O(states³).</returns>

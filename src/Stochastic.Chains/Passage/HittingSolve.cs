@@ -6,7 +6,7 @@ internal static class HittingSolve<TState>
 {
     internal static HittingTimes<TState> Of(Chain<TState> chain, int[] targets, SolveOptions options)
     {
-        var split = TargetSplit.Of(chain.Matrix, targets);
+        var split = TargetSplit.Of(chain, targets);
         var means = new double[chain.StateCount];
         var reaching = new double[chain.StateCount];
         for (var state = 0; state < means.Length; state++)
@@ -35,7 +35,8 @@ internal static class HittingSolve<TState>
             evidence.Add(solution, () => system.Residual(0, reaching));
         }
 
-        return new HittingTimes<TState>(chain.States, Array.ConvertAll(targets, target => chain.States[target]), means, reaching, evidence.ToCertificate());
+        var question = new HittingQuestion<TState>(chain, targets, split, options);
+        return new HittingTimes<TState>(question, chain.States, Array.ConvertAll(targets, target => chain.States[target]), means, reaching, evidence.ToCertificate());
     }
 
     private static IEnumerable<int> Positions(bool[] flags) => Enumerable.Range(0, flags.Length).Where(position => flags[position]);

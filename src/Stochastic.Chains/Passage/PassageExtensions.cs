@@ -94,4 +94,81 @@ public static class PassageExtensions
         ArgumentNullException.ThrowIfNull(options);
         return AbsorptionSolve<TState>.Of(chain, options);
     }
+
+    /// <summary>Finds, from every state, how likely one state is reached before another.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">Any chain.</param>
+    /// <param name="first">The state that is to come first.</param>
+    /// <param name="second">The state that must not come before it.</param>
+    /// <returns>Probabilities of the first, of the second and of neither, with their certificate.</returns>
+    /// <exception cref="ArgumentException">Both are the same state.</exception>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="MemoryLimitException">Too many states lie before the two for a direct solve.</exception>
+    /// <exception cref="NumericalRangeException">A probability is smaller than a double can hold.</exception>
+    /// <remarks>State reduction with three exits (Alfa, Xue and Ye 2002), O(n³) time for n states from which it is open.</remarks>
+    /// <example><code>double repairedFirst = pool.Before("in repair", "lost").Probability("clean");</code></example>
+    public static FirstOfTwo<TState> Before<TState>(this Chain<TState> chain, TState first, TState second)
+        where TState : notnull => BeforeAny(chain, [first], [second], new SolveOptions());
+
+    /// <summary>Finds, from every state, how likely one of some states is reached before any of some others, with options.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">Any chain.</param>
+    /// <param name="firsts">The states of which one is to come first; at least one.</param>
+    /// <param name="seconds">The states that must not come before; at least one, none of them among the firsts.</param>
+    /// <param name="options">Evidence, cancellation and memory.</param>
+    /// <exception cref="ArgumentException">A set is empty, or a state is in both.</exception>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="MemoryLimitException">Too many states lie before them for a direct solve.</exception>
+    /// <exception cref="NumericalRangeException">A probability is smaller than a double can hold.</exception>
+    /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
+    public static FirstOfTwo<TState> BeforeAny<TState>(
+        this Chain<TState> chain, IEnumerable<TState> firsts, IEnumerable<TState> seconds, SolveOptions options)
+        where TState : notnull
+    {
+        ArgumentNullException.ThrowIfNull(chain);
+        ArgumentNullException.ThrowIfNull(firsts);
+        ArgumentNullException.ThrowIfNull(seconds);
+        ArgumentNullException.ThrowIfNull(options);
+        int[] first = [.. firsts.Select(chain.States.Require).Distinct()];
+        int[] second = [.. seconds.Select(chain.States.Require).Distinct()];
+        if (first.Length == 0 || second.Length == 0)
+        {
+            throw new ArgumentException(Messages.NoTargets, first.Length == 0 ? nameof(firsts) : nameof(seconds));
+        }
+
+        int[] both = [.. first.Intersect(second)];
+        return both.Length == 0
+            ? RaceSolve<TState>.Of(chain, first, second, options)
+            : throw new ArgumentException(Messages.OnBothSides(chain.States[both[0]]), nameof(seconds));
+    }
+
+    /// <summary>Finds where things stand after a long time, given that they have not ended yet, and how fast they end.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">A chain with transient states.</param>
+    /// <returns>The quasi-stationary distribution with its decay rate.</returns>
+    /// <exception cref="ChainStructureException">There are no transient states, or two classes of them are left equally slowly.</exception>
+    /// <exception cref="ConvergenceException">Two parts of the transient states are left almost equally slowly.</exception>
+    /// <exception cref="MemoryLimitException">There are too many transient states for a direct solve.</exception>
+    /// <remarks>
+    /// Inverse iteration with the factors of one state reduction: O(t³) for t transient states, then O(t²) for each iteration, at most 10,000.
+    /// </remarks>
+    /// <example><code>double dirtyAmongThoseInUse = pool.QuasiStationary()["dirty"];</code></example>
+    public static QuasiStationaryDistribution<TState> QuasiStationary<TState>(this Chain<TState> chain)
+        where TState : notnull => QuasiStationary(chain, new SolveOptions());
+
+    /// <summary>Finds where things stand after a long time, given that they have not ended yet, with options.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">A chain with transient states.</param>
+    /// <param name="options">Evidence, cancellation and memory.</param>
+    /// <exception cref="ChainStructureException">There are no transient states, or two classes of them are left equally slowly.</exception>
+    /// <exception cref="ConvergenceException">Two parts of the transient states are left almost equally slowly.</exception>
+    /// <exception cref="MemoryLimitException">There are too many transient states for a direct solve.</exception>
+    /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
+    public static QuasiStationaryDistribution<TState> QuasiStationary<TState>(this Chain<TState> chain, SolveOptions options)
+        where TState : notnull
+    {
+        ArgumentNullException.ThrowIfNull(chain);
+        ArgumentNullException.ThrowIfNull(options);
+        return QuasiStationarySolve<TState>.Of(chain, options);
+    }
 }

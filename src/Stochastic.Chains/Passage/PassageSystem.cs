@@ -38,27 +38,11 @@ internal sealed class PassageSystem : IDisposable
     internal static PassageSystem Among(TransitionMatrix matrix, int[] states, int targets, SolveOptions options)
     {
         var system = new PassageSystem(states.Length, targets, options);
-        var numberOf = new int[matrix.Size];
+        RateTable.Among(matrix, states).CopyTo(system.Rates);
         for (var k = 0; k < states.Length; k++)
         {
-            numberOf[states[k]] = k;
-        }
-
-        var isWhole = IsWhole(states, matrix.Size);
-        for (var k = 0; k < states.Length; k++)
-        {
-            var row = system.Rates.Row(k, 0, states.Length + 1);
-            if (!isWhole || !matrix.TryCopyDenseRow(k, row[..^1]))
-            {
-                row.Clear();
-                foreach (var (to, rate) in matrix.Row(states[k]))
-                {
-                    row[numberOf[to]] = rate;
-                }
-            }
-
-            row[k] = 0;
-            row[^1] = 1;
+            system.Rates[k, k] = 0;
+            system.Rates[k, states.Length] = 1;
         }
 
         return system;
@@ -133,19 +117,6 @@ internal sealed class PassageSystem : IDisposable
         }
 
         return largest;
-    }
-
-    private static bool IsWhole(int[] states, int size)
-    {
-        for (var k = 0; k < states.Length; k++)
-        {
-            if (states[k] != k)
-            {
-                return false;
-            }
-        }
-
-        return states.Length == size;
     }
 
     private static long MemoryFor(int states, int targets) =>

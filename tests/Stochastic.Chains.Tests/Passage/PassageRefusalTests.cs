@@ -92,6 +92,17 @@ public class PassageRefusalTests
     }
 
     [Fact]
+    public void Results_enumerate_with_their_labels()
+    {
+        var times = Pool.TimeToAny(["lost", "scrapped"]);
+
+        times.ToDictionary()["clean"].Should().Be(times.Mean("clean"));
+        times.IfReached().Select(pair => pair.Key).Should().Equal(Pool.States);
+        times.VisitsFrom("clean").Single(pair => pair.Key == "at shop").Value.Should().Be(times.VisitsFrom("clean")["at shop"]);
+        times.IfReached().ToString().Should().Contain("mean time if reached");
+    }
+
+    [Fact]
     public void Bad_questions_are_refused()
     {
         Pool.Invoking(chain => chain.TimeTo("dirty")).Should().Throw<UnknownStateException>().WithMessage("*'dirty'*");

@@ -26,6 +26,8 @@ internal static class LibraryAnswers
             ["absorption_probability_top"] = query => query.Vector().Zip(Transient(query, Reaching(query, query.Chain().StateCount - 1))),
             ["first_probability"] = query => [(query.Scalar(), Reaching(query, query.Chain().StateCount - 2)[0])],
             ["ruin"] = Ruin,
+            ["substochastic_radius"] = query => [(query.Scalar(), 1 - query.Chain().ToChain().QuasiStationary().DecayRate)],
+            ["absorption_variance"] = query => query.Vector().Zip(Transient(query, Variances(query.Chain().ToChain().Absorption().Steps))),
             ["nstep_row"] = query => query.Vector().Zip(After(query, query.IntegerArgument("start"), Steps(query))),
             ["nstep_matrix"] = query => query.Matrix().SelectMany((row, start) => row.Zip(After(query, start, query.IntegerArgument("n")))),
             ["nstep_distribution"] = NStepDistribution,
@@ -62,6 +64,8 @@ internal static class LibraryAnswers
     private static double CommuteTime(FirstPassageTable<int> table, int[] pair) => table[pair[0], pair[1]] + table[pair[1], pair[0]];
 
     private static double[] Means(PublishedQuery query, int[] targets) => query.Chain().ToChain().TimeToAny(targets).Values.ToArray();
+
+    private static double[] Variances(HittingTimes<int> times) => [.. times.States.Select(times.Variance)];
 
     private static double[] Reaching(PublishedQuery query, int target) =>
         query.Chain().ToChain().TimeTo(target).ReachingProbabilities.ToArray();
