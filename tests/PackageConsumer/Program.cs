@@ -63,6 +63,9 @@ checks.Figure("share failed, linear system", pump.Stationary(new LinearSystemMet
 checks.Figure("share failed, polished", pump.Stationary(new PolishedMethod(new LinearSystemMethod())).Require(relativeError: 1e-15)[Stage.Failed], 1.0 / 15);
 checks.Figure("share failed, aggregation", pump.Stationary(new AggregationMethod())[Stage.Failed], 1.0 / 15);
 checks.Figure("weeks until failed", pump.TimeTo(Stage.Failed).Mean(Stage.New), 14);
+FirstPassageTable<Stage> passages = pump.MeanFirstPassage().Require(relativeError: 1e-12);
+checks.Figure("weeks between failures", passages[Stage.Failed, Stage.Failed], 15);
+checks.Figure("Kemeny's constant", passages.KemenyConstant, 54.0 / 15);
 checks.Holds("tables can be printed", shares.ToString().Contains("Failed", StringComparison.Ordinal));
 
 // Two pumps, either of which is enough, one repair crew; moves per hour.

@@ -5,6 +5,9 @@ namespace Stochastic.Chains.Internal;
 /// <summary>Writes labels and numbers into messages and tables, the same in every culture.</summary>
 internal static class Text
 {
+    /// <summary>The most characters in a cell of a table.</summary>
+    internal const int WidestCell = 32;
+
     private const int LabelsShown = 8;
     private const double RoundingInAdvice = 1e-12;
 
@@ -15,6 +18,9 @@ internal static class Text
         IFormattable formattable => formattable.ToString(null, CultureInfo.InvariantCulture),
         _ => state.ToString() ?? string.Empty,
     };
+
+    /// <summary>A text as a table shows it: cut where it is longer than <see cref="WidestCell"/>.</summary>
+    internal static string Shorten(string cell) => cell.Length <= WidestCell ? cell : string.Concat(cell.AsSpan(0, WidestCell - 1), "…");
 
     /// <summary>A state's text in single quotes, as messages name it.</summary>
     internal static string Quoted(object? state) => $"'{Label(state)}'";

@@ -65,6 +65,22 @@ internal static class NormalRange
         Vector512.ConditionalSelect(
             Vector512.Equals(values, Vector512<double>.Zero), Vector512.Create(double.PositiveInfinity), values));
 
+    /// <summary>Lowers each number of target to the one in values, where that is less and not zero.</summary>
+    internal static void LowerToNonzero(ReadOnlySpan<double> values, Span<double> target)
+    {
+        var vectors = MemoryMarshal.Cast<double, Vector256<double>>(values);
+        var targets = MemoryMarshal.Cast<double, Vector256<double>>(target)[..vectors.Length];
+        for (var index = 0; index < vectors.Length; index++)
+        {
+            targets[index] = SmallestNonzero(targets[index], vectors[index]);
+        }
+
+        for (var index = vectors.Length * Vector256<double>.Count; index < values.Length; index++)
+        {
+            target[index] = values[index] == 0 ? target[index] : double.MinNative(target[index], values[index]);
+        }
+    }
+
     /// <summary>The least of four lanes.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     internal static double Least(Vector256<double> lanes)

@@ -51,7 +51,8 @@ internal static class ReductionBound
 
     private static double WidestBlock => BlockReduction<TileKernel512>.WidestBlock;
 
-    private static double OfRoundings(double roundings)
+    /// <summary>The bound for so many roundings one after the other, each a factor from 1 - u to 1 / (1 - u); +∞ where it would say nothing.</summary>
+    internal static double OfRoundings(double roundings)
     {
         var error = roundings * UnitRoundoff;
         return error < 0.5 ? error / (1 - (2 * error)) : double.PositiveInfinity;

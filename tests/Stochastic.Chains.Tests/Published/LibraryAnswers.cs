@@ -15,6 +15,9 @@ internal static class LibraryAnswers
             ["cyclic_class_of"] = CyclicClassOf,
             ["loss_probability"] = query => [(query.Scalar(), Stationary(query)[^1])],
             ["mean_recurrence"] = query => query.Vector().Zip(Selected(query, query.HasArgument("states") ? "states" : "state", MeanRecurrence(query))),
+            ["mean_first_passage"] = MeanFirstPassage,
+            ["kemeny_constant"] = query => [(query.Scalar(), query.Chain().ToChain().MeanFirstPassage().KemenyConstant)],
+            ["commute_time"] = query => query.Vector().Zip([CommuteTime(query.Chain().ToChain().MeanFirstPassage(), query.States("pair"))]),
             ["hitting_mean"] = query => query.Vector().Zip(Selected(query, "start", Means(query, query.States("target")))),
             ["hitting_time_mean"] = query => query.Vector().Zip(Selected(query, "start", Means(query, query.States("target")))),
             ["mttf"] = query => query.Vector().Zip(Selected(query, "start", Means(query, [query.Chain().StateCount - 1]))),
@@ -77,6 +80,16 @@ internal static class LibraryAnswers
         return query.Matrix().Zip(query.StateLists("classes")).SelectMany(pair =>
             pair.First.Zip(pair.Second.Select(state => perClass.Single(shares => shares[pair.Second[0]] > 0)[state])));
     }
+
+    private static IEnumerable<Pair> MeanFirstPassage(PublishedQuery query)
+    {
+        var table = query.Chain().ToChain().MeanFirstPassage();
+        return query.HasArgument("pairs")
+            ? query.Vector().Zip(query.StateLists("pairs").Select(pair => table[pair[0], pair[1]]))
+            : query.Matrix().SelectMany((row, from) => row.Zip(table.TimesFrom(from).Select(time => time.Mean)));
+    }
+
+    private static double CommuteTime(FirstPassageTable<int> table, int[] pair) => table[pair[0], pair[1]] + table[pair[1], pair[0]];
 
     private static double[] Means(PublishedQuery query, int[] targets) => query.Chain().ToChain().TimeToAny(targets).Values.ToArray();
 
