@@ -28,6 +28,8 @@ internal static class LibraryAnswers
             ["first_probability"] = query => [(query.Scalar(), Reaching(query, query.Chain().StateCount - 2)[0])],
             ["ruin"] = Ruin,
             ["variance_first_passage"] = VarianceFirstPassage,
+            ["lump"] = Lump,
+            ["censored_chain"] = query => Entries(query, query.Chain().ToChain().Censor(query.States("states"))),
             ["substochastic_radius"] = query => [(query.Scalar(), 1 - query.Chain().ToChain().QuasiStationary().DecayRate)],
             ["absorption_variance"] = query => query.Vector().Zip(Transient(query, Variances(query.Chain().ToChain().Absorption().Steps))),
             ["nstep_row"] = query => query.Vector().Zip(After(query, query.IntegerArgument("start"), Steps(query))),
@@ -98,6 +100,19 @@ internal static class LibraryAnswers
     {
         var variances = query.Chain().ToChain().MeanFirstPassage().Variances();
         return query.Matrix().SelectMany((row, from) => row.Select((published, to) => (published, variances.Variance(from, to))));
+    }
+
+    private static IEnumerable<Pair> Lump(PublishedQuery query)
+    {
+        var groups = query.StateLists("partition");
+        return Entries(query, query.Chain().ToChain().Lump(state => groups.First(group => group.Contains(state))[0]));
+    }
+
+    /// <summary>The states in the order of the published table, which need not be that of the chain.</summary>
+    private static IEnumerable<Pair> Entries(PublishedQuery query, Chain<int> chain)
+    {
+        var order = query.HasArgument("states") ? query.States("states") : [.. query.StateLists("partition").Select(group => group[0])];
+        return query.Matrix().SelectMany((row, from) => row.Select((published, to) => (published, chain[order[from], order[to]])));
     }
 
     private static double[] Variances(HittingTimes<int> times) => [.. times.States.Select(times.Variance)];
