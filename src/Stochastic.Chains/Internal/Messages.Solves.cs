@@ -30,7 +30,7 @@ internal static partial class Messages
 
     internal static string TimedChainHasNoSteps(double rate) =>
         $"The chain was made from rates, so its time is not counted in steps (it makes {Text.Short(rate)} of them per unit of time on average, stays included). " +
-        "Ask MakeAbsorbing(targets).StartingIn(from).AfterTime(t) for the probability of having arrived by a time.";
+        "Ask StartingIn(from).AfterTime(t) for where things stand at a time, and MakeAbsorbing(targets).StartingIn(from).AfterTime(t) for what has arrived by then.";
 
     internal static string ProbabilityBetweenZeroAndOne(double value) => $"The probability is {Text.Number(value)}. Give a number above 0 and below 1.";
 
@@ -49,6 +49,9 @@ internal static partial class Messages
     internal static string SeveralSlowestClasses(object first, object second) =>
         $"The classes of {Text.Quoted(first)} and {Text.Quoted(second)} are left equally slowly, so where things stand depends on the start for ever. " +
         "Ask StartingIn(…).After(n) for a given start.";
+
+    internal const string NothingStays =
+        "The transient states are all left for good after a few steps, so nothing is still in after many. Ask StartingIn(…).After(n) for the first steps.";
 
     internal const string SlowQuasiStationary = "Two parts of the transient states are left almost equally slowly. Ask StartingIn(…).After(n) for a given start.";
 
@@ -79,6 +82,9 @@ internal static partial class Messages
 
     internal static string TransientEnd(object state) =>
         $"{Text.Quoted(state)} is transient: nothing ends there. Ask TimeTo({Text.Quoted(state)}).ReachingProbability for the probability of ever reaching it.";
+
+    internal static string TooManySteps(long steps, long most) =>
+        $"{Text.Count(steps, "step", "steps")} one by one take too long; the most is {Text.Count(most)}. Ask NStep({Text.Count(steps)}), which squares, or LongRun().";
 
     internal static string NegativeSteps(long steps) => $"The number of steps is {Text.Count(steps)}. Give 0 or more.";
 

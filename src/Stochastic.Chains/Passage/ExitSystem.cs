@@ -52,9 +52,6 @@ internal sealed class ExitSystem<TState> : IDisposable
     /// <summary>A bound below 1 on the relative error of <see cref="SolveUpper"/>; +∞ when there is none.</summary>
     internal double SolveError => ReductionBound.OfSystem(_rates.Rows, _rates.Columns, _merges);
 
-    /// <summary>A bound on the relative error of <see cref="SolveLeft"/>.</summary>
-    internal double LeftError => _doubled is null ? SolveError : DoubledElimination.RelativeErrorBound(_rates.Rows, _rates.Columns, _merges);
-
     /// <summary>Solves A · x = given, both over the members.</summary>
     internal WideSolution Solve(ScaledDoubleDouble[] given) => Solve(given, new double[_chain.StateCount]);
 
@@ -73,6 +70,11 @@ internal sealed class ExitSystem<TState> : IDisposable
         for (var state = 0; state < atExits.Length; state++)
         {
             atExits[state] = IsExit(state) && _exitOf[state] == exit ? 1 : 0;
+        }
+
+        if (Array.TrueForAll(RatesIntoExits[exit], rate => rate.IsZero))
+        {
+            return new ExitSolution(new double[_members.Length], ErrorBasis.Structure, 0); // no member can leave that way
         }
 
         var solution = Solve(RatesIntoExits[exit], atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
@@ -172,6 +174,26 @@ internal sealed class ExitSystem<TState> : IDisposable
         var wide = Array.ConvertAll(values, value => (ScaledDoubleDouble)value);
         Doubled.SolveLeft(wide);
         Array.ConvertAll(wide, value => value.ToDouble()).CopyTo(values, 0);
+    }
+
+    /// <summary>Takes weights of the members one step on; what leaves them is dropped.</summary>
+    internal double[] Step(double[] weights)
+    {
+        var steps = StepMatrix.Of(_chain);
+        var next = new double[weights.Length];
+        for (var k = 0; k < weights.Length; k++)
+        {
+            foreach (var (to, probability) in _chain.Matrix.Row(_members[k]))
+            {
+                var column = _rates.ColumnOf(to);
+                if (column >= 0 && column < next.Length)
+                {
+                    next[column] += weights[k] * (to == _members[k] ? steps.Stay(to) : probability);
+                }
+            }
+        }
+
+        return next;
     }
 
     /// <summary>

@@ -1,5 +1,6 @@
 using System.Diagnostics;
 using System.Globalization;
+using MathNet.Numerics.LinearAlgebra;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Kernels;
 
@@ -68,6 +69,9 @@ public sealed class FirstPassageVariances<TState> : ICertified
     /// <param name="to">The state to reach; the same state for its recurrence time.</param>
     /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
     public double StandardDeviation(TState from, TState to) => _deviations[PositionOf(from, to)];
+
+    /// <summary>Copies the standard deviations into a new dense MathNet.Numerics matrix: row = from, column = to.</summary>
+    public Matrix<double> ToMatrix() => Matrix<double>.Build.DenseOfRowMajor(States.Count, States.Count, _deviations);
 
     /// <summary>A small table of the standard deviations, the same in every culture.</summary>
     public override string ToString()
