@@ -70,7 +70,8 @@ internal sealed class ExitSystem<TState> : IDisposable
             atExits[state] = IsExit(state) && _exitOf[state] == exit ? 1 : 0;
         }
 
-        var given = Array.ConvertAll(_members, member => ExitRate(member, exit));
+        int[] states = [.. Enumerable.Range(0, atExits.Length).Where(state => atExits[state] == 1)];
+        var given = Array.ConvertAll(_members, member => ExitRate(member, states, atExits));
         var solution = Solve(given, atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
         return solution with { Values = Array.ConvertAll(solution.Values, value => Math.Min(1, value)) };
     }
@@ -210,12 +211,26 @@ internal sealed class ExitSystem<TState> : IDisposable
 
     private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
 
-    private ScaledDoubleDouble ExitRate(int member, int exit)
+    /// <summary>The sum of the rates to some states, in ascending order; of a full row only those are read.</summary>
+    private ScaledDoubleDouble ExitRate(int member, int[] states, double[] isAmong)
     {
         var rate = default(ScaledDoubleDouble);
+        if (_chain.Matrix.TryGetDenseRow(member, out var row))
+        {
+            foreach (var state in states)
+            {
+                rate += row[state];
+            }
+
+            return rate;
+        }
+
         foreach (var (to, probability) in _chain.Matrix.Row(member))
         {
-            rate += IsExit(to) && _exitOf[to] == exit ? probability : 0;
+            if (isAmong[to] == 1)
+            {
+                rate += probability;
+            }
         }
 
         return rate;
