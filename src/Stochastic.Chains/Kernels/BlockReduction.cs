@@ -180,7 +180,8 @@ internal sealed class BlockReduction<TKernel> : IDisposable
     {
         var row = piece * UpdateRows;
         PanelProduct<TKernel>.Add(
-            ref _factors[row * _depth], ref _rates[0], _depth, _table.From(_next + row, _next), Math.Min(UpdateRows, Below - row), Right);
+            ref _factors[row * _depth], ColumnTiles<TKernel>.Packed(ref _rates[0], _depth), _depth, _next - _first,
+            _table.From(_next + row, _next), Math.Min(UpdateRows, Below - row), Right);
     }
 
     private void MeasureRates(int group)

@@ -80,7 +80,7 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
             for (var row = depth - side; row >= 0; row -= side)
             {
                 TKernel.AddTile(
-                    ref _lower[row * depth], ref panel, row + side,
+                    ref _lower[row * depth], ref panel, TKernel.TileColumns, row + side,
                     ref Unsafe.Add(ref panel, row * TKernel.TileColumns), TKernel.TileColumns, side);
             }
         }
@@ -98,14 +98,14 @@ internal sealed class BlockTriangles<TKernel>(int widest) : IDisposable
             for (var rest = depth - side; rest >= column; rest -= side)
             {
                 TKernel.AddNarrowTile(
-                    ref panel, ref _upperPanels[(column * depth) + rest - column], rest + side,
+                    ref panel, ref _upperPanels[(column * depth) + rest - column], tile, rest + side,
                     ref Unsafe.Add(ref panel, rest * side), side);
             }
 
             for (column -= tile; column >= 0; column -= tile)
             {
                 TKernel.AddTile(
-                    ref panel, ref _upperPanels[column * depth], column + tile,
+                    ref panel, ref _upperPanels[column * depth], tile, column + tile,
                     ref Unsafe.Add(ref panel, column * side), side, side * side);
             }
         }

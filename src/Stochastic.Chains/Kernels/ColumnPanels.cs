@@ -92,9 +92,9 @@ internal static class ColumnPanels<TKernel>
 
     private static void PackRest(ReadOnlySpan<double> source, ref double target)
     {
-        for (var lane = 0; lane < TKernel.TileColumns; lane++)
+        for (var lane = 0; lane < TKernel.TileColumns; lane += Vector256<double>.Count)
         {
-            Unsafe.Add(ref target, lane) = lane < source.Length ? source[lane] : 0;
+            EdgeVector.Of(source, lane).StoreUnsafe(ref Unsafe.Add(ref target, lane));
         }
     }
 }

@@ -16,10 +16,11 @@ internal sealed class FirstPassageReduction : IDisposable
     private readonly PassageElimination _elimination;
     private bool _keepsRange = true;
 
-    private FirstPassageReduction(int states, int kept, InstructionSet instructions, WorkSharing sharing, Action<double>? progress)
+    private FirstPassageReduction(int states, int kept, bool isSafe, InstructionSet instructions, WorkSharing sharing, Action<double>? progress)
     {
         _memory = PooledBuffer.Rent(checked((int)SizeFor(states, kept)));
-        _product = new GuardedProduct(states, instructions, sharing, progress is null ? null : made => progress(Math.Min(1, made / WorkOf(states))));
+        _product = new GuardedProduct(
+            states, instructions, sharing, isSafe, progress is null ? null : made => progress(Math.Min(1, made / WorkOf(states))));
         _elimination = new PassageElimination(_product);
     }
 
@@ -44,7 +45,8 @@ internal sealed class FirstPassageReduction : IDisposable
         MatrixView rates, int states, int kept, MatrixView times, int threads, InstructionSet instructions, Action<double>? progress,
         CancellationToken cancellation)
     {
-        using var reduction = new FirstPassageReduction(states, kept, instructions, new WorkSharing(threads, cancellation), progress);
+        var isSafe = kept == states && FullRates.KeepProducts(rates, states);
+        using var reduction = new FirstPassageReduction(states, kept, isSafe, instructions, new WorkSharing(threads, cancellation), progress);
         if (kept == states)
         {
             reduction.Solve(rates, states, times, 0);
@@ -118,7 +120,7 @@ internal sealed class FirstPassageReduction : IDisposable
         }
 
         var weights = before.From(0, dropped);
-        _product.Add(rates.From(keep, drop), weights, among, kept, dropped, kept + 1);
+        _product.AddWithLast(rates.From(keep, drop), weights, among, kept, dropped, kept);
         Solve(among, kept, times.From(keep, keep), free);
         for (var row = 0; row < dropped; row++)
         {

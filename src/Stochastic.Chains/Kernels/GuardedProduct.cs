@@ -7,15 +7,20 @@ namespace Stochastic.Chains.Kernels;
 /// <param name="widest">The largest inner dimension that will occur.</param>
 /// <param name="instructions">The vectors to use.</param>
 /// <param name="sharing">Threads and cancellation.</param>
+/// <param name="isSafe">Whether it is known beforehand that all products keep to the normal range: nothing is looked at then.</param>
 /// <param name="progress">Told now and then how many multiply-adds were made; null when nobody listens.</param>
-internal sealed class GuardedProduct(int widest, InstructionSet instructions, WorkSharing sharing, Action<double>? progress)
+internal sealed class GuardedProduct(int widest, InstructionSet instructions, WorkSharing sharing, bool isSafe, Action<double>? progress)
 {
     private const long SmallestForPanels = 4096;
     private const long WorthReporting = 1 << 22;
 
     private readonly double[] _leftSmallest = new double[widest];
+    private readonly double[] _lastColumn = new double[widest];
     private double _made;
     private double _reported;
+
+    /// <summary>Whether products have to be looked at.</summary>
+    internal bool MustLook => !isSafe;
 
     /// <summary>Whether every product so far kept to the normal range.</summary>
     internal bool KeepsRange { get; private set; } = true;
@@ -33,7 +38,11 @@ internal sealed class GuardedProduct(int widest, InstructionSet instructions, Wo
     /// <exception cref="OperationCanceledException">Cancellation was requested.</exception>
     internal void Add(MatrixView left, MatrixView right, MatrixView target, int rows, int inner, int columns)
     {
-        CheckRange(left, right, rows, inner, columns);
+        if (MustLook)
+        {
+            CheckRange(left, right, rows, inner, columns);
+        }
+
         var work = (long)rows * inner * columns;
         if (work >= SmallestForPanels)
         {
@@ -52,6 +61,34 @@ internal sealed class GuardedProduct(int widest, InstructionSet instructions, Wo
                     VectorLoops.AddScaled(left[row, index], right.Row(index, 0, columns), sums);
                 }
             }
+        }
+    }
+
+    /// <summary>
+    /// The same for a right side of rates and of holding times behind them: one column more than a number of whole tiles, perhaps, and
+    /// cheaper apart.
+    /// </summary>
+    /// <exception cref="OperationCanceledException">Cancellation was requested.</exception>
+    internal void AddWithLast(MatrixView left, MatrixView right, MatrixView target, int rows, int inner, int columns)
+    {
+        Add(left, right, target, rows, inner, columns);
+        var last = _lastColumn.AsSpan(0, inner);
+        for (var index = 0; index < inner; index++)
+        {
+            last[index] = right[index, columns];
+        }
+
+        if (MustLook)
+        {
+            for (var index = 0; index < inner; index++)
+            {
+                KeepsRange &= last[index] == 0 || NormalRange.KeepsProduct(_leftSmallest[index], last[index]);
+            }
+        }
+
+        for (var row = 0; row < rows; row++)
+        {
+            target[row, columns] += VectorLoops.Dot(left.Row(row, 0, inner), last);
         }
     }
 

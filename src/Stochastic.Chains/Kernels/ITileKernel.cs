@@ -5,8 +5,7 @@ namespace Stochastic.Chains.Kernels;
 /// </summary>
 /// <remarks>
 /// Operands are packed. A row panel holds <see cref="Width"/> rows as consecutive squares of Width x Width numbers, row by row inside a
-/// square, so that packing copies whole vectors. A column panel holds its columns side by side, row after row. Depths are multiples of
-/// Width. Each multiply-add rounds once where the machine has a fused multiply-add and at most twice elsewhere; sums run over the depth in
+/// square, so that packing copies whole vectors. A column panel holds its columns side by side, row after row. Each multiply-add rounds once where the machine has a fused multiply-add and at most twice elsewhere; sums run over the depth in
 /// ascending order, so the result depends on nothing but the operands.
 /// </remarks>
 internal interface ITileKernel
@@ -18,15 +17,16 @@ internal interface ITileKernel
     static abstract int TileColumns { get; }
 
     /// <summary>
-    /// Adds the product of a row panel (Width x depth) and a column panel (depth x TileColumns) to a target tile, whose rows lie
+    /// Adds the product of a row panel (Width x depth) and a column panel (depth x TileColumns) to a target tile. The rows of the column
+    /// panel lie <paramref name="columnStride"/> doubles apart, TileColumns when it is packed; the rows of the target lie
     /// <paramref name="rowStride"/> and whose vectors lie <paramref name="vectorStride"/> doubles apart. The operands are read completely
     /// before the target is written.
     /// </summary>
     static abstract void AddTile(
-        ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride, nint vectorStride);
+        ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride, nint vectorStride);
 
     /// <summary>As <see cref="AddTile"/>, for one vector of columns out of a column panel.</summary>
-    static abstract void AddNarrowTile(ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride);
+    static abstract void AddNarrowTile(ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride);
 
     /// <summary>
     /// Adds factors (rows x Width, row by row) times source (Width x vectors·Width, as consecutive squares) to the target. Rows are

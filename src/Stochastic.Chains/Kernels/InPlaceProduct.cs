@@ -1,4 +1,5 @@
 using System.Runtime.CompilerServices;
+using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
 namespace Stochastic.Chains.Kernels;
@@ -35,41 +36,59 @@ internal static class InPlaceProduct
             square.Slice(row * stride, rows).CopyTo(left[(row * MostRows)..]);
         }
 
-        Span<double> right = stackalloc double[rows * ColumnsAtOnce];
         Span<double> result = stackalloc double[filled * ColumnsAtOnce];
-        for (var column = 0; column < columns; column += ColumnsAtOnce)
+        var column = 0;
+        for (; column + ColumnsAtOnce <= columns; column += ColumnsAtOnce)
         {
-            var width = Math.Min(ColumnsAtOnce, columns - column);
-            if (width < ColumnsAtOnce)
-            {
-                right.Clear();
-            }
-
-            for (var row = 0; row < rows; row++)
-            {
-                matrix.Row(row, column, width).CopyTo(right[(row * ColumnsAtOnce)..]);
-            }
-
             for (var row = 0; row < rows; row += RowsAtOnce)
             {
-                MultiplyRows(ref left[row * MostRows], ref right[0], rows, ref result[row * ColumnsAtOnce]);
+                MultiplyRows(ref left[row * MostRows], ref matrix[0, column], matrix.Stride, rows, ref result[row * ColumnsAtOnce]);
             }
 
             for (var row = 0; row < rows; row++)
             {
-                result.Slice(row * ColumnsAtOnce, width).CopyTo(matrix.Row(row, column, width));
+                ref var target = ref matrix[row, column];
+                Vector256.LoadUnsafe(ref result[row * ColumnsAtOnce]).StoreUnsafe(ref target);
+                Vector256.LoadUnsafe(ref result[(row * ColumnsAtOnce) + 4]).StoreUnsafe(ref target, 4);
             }
+        }
+
+        if (column < columns)
+        {
+            MultiplyEdge(left, matrix.From(0, column), rows, columns - column, result);
+        }
+    }
+
+    private static void MultiplyEdge(ReadOnlySpan<double> left, MatrixView matrix, int rows, int columns, Span<double> result)
+    {
+        Span<double> right = stackalloc double[rows * ColumnsAtOnce];
+        right.Clear();
+        for (var row = 0; row < rows; row++)
+        {
+            matrix.Row(row, 0, columns).CopyTo(right[(row * ColumnsAtOnce)..]);
+        }
+
+        for (var row = 0; row < rows; row += RowsAtOnce)
+        {
+            MultiplyRows(
+                ref MemoryMarshal.GetReference(left[(row * MostRows)..]), ref right[0], ColumnsAtOnce, rows, ref result[row * ColumnsAtOnce]);
+        }
+
+        for (var row = 0; row < rows; row++)
+        {
+            result.Slice(row * ColumnsAtOnce, columns).CopyTo(matrix.Row(row, 0, columns));
         }
     }
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static void MultiplyRows(ref double left, ref double right, int inner, ref double result)
+    private static void MultiplyRows(ref double left, ref double right, nint stride, int inner, ref double result)
     {
         Vector256<double> a0 = default, a1 = default, b0 = default, b1 = default, c0 = default, c1 = default, d0 = default, d1 = default;
         for (nint index = 0; index < inner; index++)
         {
-            var first = Vector256.LoadUnsafe(ref Unsafe.Add(ref right, index * ColumnsAtOnce));
-            var second = Vector256.LoadUnsafe(ref Unsafe.Add(ref right, (index * ColumnsAtOnce) + 4));
+            var first = Vector256.LoadUnsafe(ref right);
+            var second = Vector256.LoadUnsafe(ref right, 4);
+            right = ref Unsafe.Add(ref right, stride);
             var factor = Vector256.Create(Unsafe.Add(ref left, index));
             a0 = Vector256.MultiplyAddEstimate(factor, first, a0);
             a1 = Vector256.MultiplyAddEstimate(factor, second, a1);

@@ -100,8 +100,15 @@ internal static class NormalRange
     /// <summary>The least of some numbers, +∞ of none.</summary>
     internal static double Least(ReadOnlySpan<double> values)
     {
-        var least = double.PositiveInfinity;
-        foreach (var value in values)
+        var vectors = MemoryMarshal.Cast<double, Vector256<double>>(values);
+        var lanes = Vector256.Create(double.PositiveInfinity);
+        foreach (var vector in vectors)
+        {
+            lanes = Vector256.MinNative(lanes, vector);
+        }
+
+        var least = Least(lanes);
+        foreach (var value in values[(vectors.Length * Vector256<double>.Count)..])
         {
             least = double.MinNative(least, value);
         }

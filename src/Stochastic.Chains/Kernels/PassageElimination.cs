@@ -21,8 +21,12 @@ internal sealed class PassageElimination(GuardedProduct product)
     private const int TileColumns = 24;
     private const int SmallestForTiles = 4 * TileColumns;
 
-    /// <summary>Where a set of states is cut in two: whole tiles for large sets.</summary>
-    internal static int Half(int states) => states < SmallestForTiles ? states / 2 : ((states / 2) + (TileColumns / 2)) / TileColumns * TileColumns;
+    /// <summary>Where a set of states is cut in two: whole tiles for large sets, whole bases for smaller ones.</summary>
+    internal static int Half(int states)
+    {
+        var whole = states >= SmallestForTiles ? TileColumns : states > LargestBase ? LargestBase : 1;
+        return ((states / 2) + (whole / 2)) / whole * whole;
+    }
 
     /// <summary>
     /// Eliminates the states of a table [A_RR | A_RL | c_R] of <paramref name="states"/> rows and one column for each of them, each of the
@@ -43,13 +47,13 @@ internal sealed class PassageElimination(GuardedProduct product)
             return false;
         }
 
-        product.Add(table.From(first, 0), table.From(0, first), table.From(first, first), second, first, second + others + 1);
+        product.AddWithLast(table.From(first, 0), table.From(0, first), table.From(first, first), second, first, second + others);
         if (!Eliminate(table.From(first, first), second, others))
         {
             return false;
         }
 
-        product.Add(table.From(0, first), table.From(first, states), table.From(0, states), first, second, others + 1);
+        product.AddWithLast(table.From(0, first), table.From(first, states), table.From(0, states), first, second, others);
         return true;
     }
 
@@ -78,7 +82,10 @@ internal sealed class PassageElimination(GuardedProduct product)
             table.Row(row, 0, states).CopyTo(square[(row * width)..]);
             square[(row * width) + states] = Sum(table.Row(row, states, others));
             square[(row * width) + states + 1 + row] = 1;
-            smallestRates[row] = NormalRange.SmallestNonzero(table.Row(row, states, others + 1));
+            if (product.MustLook)
+            {
+                smallestRates[row] = NormalRange.SmallestNonzero(table.Row(row, states, others + 1));
+            }
         }
 
         if (!Forward(square, states, pivots) || !Backward(square, states, pivots))
@@ -87,14 +94,18 @@ internal sealed class PassageElimination(GuardedProduct product)
         }
 
         var visits = square[(states + 1)..];
-        Span<double> smallestVisits = stackalloc double[states];
-        smallestVisits.Fill(double.PositiveInfinity);
-        for (var row = 0; row < states; row++)
+        if (product.MustLook)
         {
-            NormalRange.LowerToNonzero(visits.Slice(row * width, states), smallestVisits);
+            Span<double> smallestVisits = stackalloc double[states];
+            smallestVisits.Fill(double.PositiveInfinity);
+            for (var row = 0; row < states; row++)
+            {
+                NormalRange.LowerToNonzero(visits.Slice(row * width, states), smallestVisits);
+            }
+
+            product.Note(NormalRange.KeepsProducts(smallestVisits, smallestRates));
         }
 
-        product.Note(NormalRange.KeepsProducts(smallestVisits, smallestRates));
         InPlaceProduct.Multiply(visits, width, table.From(0, states), states, others + 1);
         return true;
     }

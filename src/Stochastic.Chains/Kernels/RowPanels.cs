@@ -127,9 +127,9 @@ internal static class RowPanels<TKernel>
     private static void PackRest(ReadOnlySpan<double> source, int columns, ref double square)
     {
         var side = TKernel.Width;
-        for (var column = 0; column < columns; column++)
+        for (var column = 0; column < columns; column += Vector256<double>.Count)
         {
-            Unsafe.Add(ref square, (column / side * side * side) + (column % side)) = column < source.Length ? source[column] : 0;
+            EdgeVector.Of(source, column).StoreUnsafe(ref Unsafe.Add(ref square, (column / side * side * side) + (column % side)));
         }
     }
 }

@@ -23,7 +23,7 @@ internal static class SquaringRows
             // A product with the reciprocal, corrected once (Markstein 1990): several times as fast as a division.
             var quotient = vectors[index] * reciprocal;
             var rest = Vector256.FusedMultiplyAdd(-quotient, divisor, vectors[index]);
-            vectors[index] = Vector256.Min(Vector256.FusedMultiplyAdd(rest, reciprocal, quotient), Vector256<double>.One);
+            vectors[index] = Vector256.MinNative(Vector256.FusedMultiplyAdd(rest, reciprocal, quotient), Vector256<double>.One);
         }
 
         foreach (ref var entry in row[(vectors.Length * Lanes)..])

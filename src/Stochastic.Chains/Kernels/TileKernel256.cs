@@ -15,7 +15,7 @@ internal readonly struct TileKernel256 : ITileKernel
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
     public static void AddTile(
-        ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride, nint vectorStride)
+        ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride, nint vectorStride)
     {
         Vector256<double> c00 = default, c01 = default, c02 = default, c10 = default, c11 = default, c12 = default;
         Vector256<double> c20 = default, c21 = default, c22 = default, c30 = default, c31 = default, c32 = default;
@@ -23,7 +23,8 @@ internal readonly struct TileKernel256 : ITileKernel
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 4)
         {
-            for (nint k = 0; k < 4; k++)
+            var steps = Math.Min(depth, 4);
+            for (nint k = 0; k < steps; k++)
             {
                 var b0 = Vector256.LoadUnsafe(ref b);
                 var b1 = Vector256.LoadUnsafe(ref b, 4);
@@ -45,7 +46,7 @@ internal readonly struct TileKernel256 : ITileKernel
                 c31 = Vector256.MultiplyAddEstimate(x, b1, c31);
                 c32 = Vector256.MultiplyAddEstimate(x, b2, c32);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 12);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 12);
@@ -62,14 +63,15 @@ internal readonly struct TileKernel256 : ITileKernel
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
-    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride)
+    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride)
     {
         Vector256<double> c0 = default, c1 = default, c2 = default, c3 = default;
         ref var a = ref rowPanel;
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 4)
         {
-            for (nint k = 0; k < 4; k++)
+            var steps = Math.Min(depth, 4);
+            for (nint k = 0; k < steps; k++)
             {
                 var x = Vector256.LoadUnsafe(ref b);
                 c0 = Vector256.MultiplyAddEstimate(Vector256.Create(a), x, c0);
@@ -77,7 +79,7 @@ internal readonly struct TileKernel256 : ITileKernel
                 c2 = Vector256.MultiplyAddEstimate(Vector256.Create(Unsafe.Add(ref a, 8)), x, c2);
                 c3 = Vector256.MultiplyAddEstimate(Vector256.Create(Unsafe.Add(ref a, 12)), x, c3);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 12);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 12);

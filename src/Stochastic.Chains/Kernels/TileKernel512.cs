@@ -15,7 +15,7 @@ internal readonly struct TileKernel512 : ITileKernel
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
     public static void AddTile(
-        ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride, nint vectorStride)
+        ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride, nint vectorStride)
     {
         Vector512<double> c00 = default, c01 = default, c02 = default, c10 = default, c11 = default, c12 = default;
         Vector512<double> c20 = default, c21 = default, c22 = default, c30 = default, c31 = default, c32 = default;
@@ -25,7 +25,8 @@ internal readonly struct TileKernel512 : ITileKernel
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 8)
         {
-            for (nint k = 0; k < 8; k++)
+            var steps = Math.Min(depth, 8);
+            for (nint k = 0; k < steps; k++)
             {
                 var b0 = Vector512.LoadUnsafe(ref b);
                 var b1 = Vector512.LoadUnsafe(ref b, 8);
@@ -63,7 +64,7 @@ internal readonly struct TileKernel512 : ITileKernel
                 c71 = Vector512.MultiplyAddEstimate(x, b1, c71);
                 c72 = Vector512.MultiplyAddEstimate(x, b2, c72);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 24);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 56);
@@ -88,7 +89,7 @@ internal readonly struct TileKernel512 : ITileKernel
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
-    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride)
+    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride)
     {
         Vector512<double> c0 = default, c1 = default, c2 = default, c3 = default;
         Vector512<double> c4 = default, c5 = default, c6 = default, c7 = default;
@@ -96,7 +97,8 @@ internal readonly struct TileKernel512 : ITileKernel
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 8)
         {
-            for (nint k = 0; k < 8; k++)
+            var steps = Math.Min(depth, 8);
+            for (nint k = 0; k < steps; k++)
             {
                 var x = Vector512.LoadUnsafe(ref b);
                 c0 = Vector512.MultiplyAddEstimate(Vector512.Create(a), x, c0);
@@ -108,7 +110,7 @@ internal readonly struct TileKernel512 : ITileKernel
                 c6 = Vector512.MultiplyAddEstimate(Vector512.Create(Unsafe.Add(ref a, 48)), x, c6);
                 c7 = Vector512.MultiplyAddEstimate(Vector512.Create(Unsafe.Add(ref a, 56)), x, c7);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 24);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 56);

@@ -15,7 +15,7 @@ internal readonly struct TileKernelPortable : ITileKernel
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
     public static void AddTile(
-        ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride, nint vectorStride)
+        ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride, nint vectorStride)
     {
         Vector128<double> c00 = default, c01 = default, c02 = default, c03 = default;
         Vector128<double> c10 = default, c11 = default, c12 = default, c13 = default;
@@ -25,7 +25,8 @@ internal readonly struct TileKernelPortable : ITileKernel
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 4)
         {
-            for (nint k = 0; k < 4; k++)
+            var steps = Math.Min(depth, 4);
+            for (nint k = 0; k < steps; k++)
             {
                 var b0 = Vector128.LoadUnsafe(ref b);
                 var b1 = Vector128.LoadUnsafe(ref b, 2);
@@ -52,7 +53,7 @@ internal readonly struct TileKernelPortable : ITileKernel
                 c32 = Vector128.MultiplyAddEstimate(x, b2, c32);
                 c33 = Vector128.MultiplyAddEstimate(x, b3, c33);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 8);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 12);
@@ -71,7 +72,7 @@ internal readonly struct TileKernelPortable : ITileKernel
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.NoInlining)]
-    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, int depth, ref double target, nint rowStride)
+    public static void AddNarrowTile(ref double rowPanel, ref double columnPanel, nint columnStride, int depth, ref double target, nint rowStride)
     {
         Vector128<double> c00 = default, c01 = default, c10 = default, c11 = default;
         Vector128<double> c20 = default, c21 = default, c30 = default, c31 = default;
@@ -79,7 +80,8 @@ internal readonly struct TileKernelPortable : ITileKernel
         ref var b = ref columnPanel;
         for (; depth > 0; depth -= 4)
         {
-            for (nint k = 0; k < 4; k++)
+            var steps = Math.Min(depth, 4);
+            for (nint k = 0; k < steps; k++)
             {
                 var b0 = Vector128.LoadUnsafe(ref b);
                 var b1 = Vector128.LoadUnsafe(ref b, 2);
@@ -96,7 +98,7 @@ internal readonly struct TileKernelPortable : ITileKernel
                 c30 = Vector128.MultiplyAddEstimate(x, b0, c30);
                 c31 = Vector128.MultiplyAddEstimate(x, b1, c31);
                 a = ref Unsafe.Add(ref a, 1);
-                b = ref Unsafe.Add(ref b, 8);
+                b = ref Unsafe.Add(ref b, columnStride);
             }
 
             a = ref Unsafe.Add(ref a, 12);

@@ -28,7 +28,7 @@ internal sealed class FirstPassageSolve<TState>
         _instructions = instructions;
         _stepsPerTime = chain.UniformizationRate ?? 1;
         options.RequireMemory(chain.StateCount, sizeof(double) * (long)chain.StateCount * chain.StateCount);
-        _values = new double[chain.StateCount * chain.StateCount];
+        _values = GC.AllocateUninitializedArray<double>(chain.StateCount * chain.StateCount);
         _returns = new double[chain.StateCount];
         Array.Fill(_returns, double.PositiveInfinity);
     }

@@ -66,24 +66,9 @@ internal sealed class PassageSystem : IDisposable
     /// <summary>Adds what a state waits on its way back: one step and the steps back from where it moves to.</summary>
     internal double[] Returns(MatrixView steps)
     {
-        const int tile = 64;
         var returns = new double[_targets];
         Array.Fill(returns, 1);
-        for (var first = 0; first < _targets; first += tile)
-        {
-            for (var start = 0; start < _targets; start += tile)
-            {
-                for (var state = first; state < Math.Min(first + tile, _targets); state++)
-                {
-                    var rates = Rates.Row(state, start, Math.Min(tile, _targets - start));
-                    for (var other = 0; other < rates.Length; other++)
-                    {
-                        returns[state] += rates[other] * steps[start + other, state];
-                    }
-                }
-            }
-        }
-
+        ProductDiagonal.Add(Rates, steps, returns);
         return returns;
     }
 

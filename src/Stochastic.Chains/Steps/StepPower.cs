@@ -10,11 +10,7 @@ internal sealed class StepPower : IDisposable
 {
     private const int RowsPerPiece = 64;
 
-    // Whole tiles are faster than their edges.
-    private const int TileSide = 8;
-
     private readonly int _size;
-    private readonly int _extent;
     private readonly CyclicGroups? _groups;
     private readonly InstructionSet _instructions;
     private readonly WorkSharing _sharing;
@@ -29,7 +25,6 @@ internal sealed class StepPower : IDisposable
         _chain = SquaringChain.For(steps);
         options.RequireMemory(size, Bytes(size, _chain.LargestHeld()));
         _size = size;
-        _extent = (size + TileSide - 1) / TileSide * TileSide;
         _groups = groups;
         _instructions = instructions;
         _sharing = new WorkSharing(options.Parallelism, options.CancellationToken);
@@ -80,7 +75,7 @@ internal sealed class StepPower : IDisposable
     }
 
     private static long Bytes(int size, int tables) =>
-        sizeof(double) * (((long)size * size) + ((long)tables * (size + TileSide) * WorkTable.PreferredStride(size)));
+        sizeof(double) * (((long)size * size) + ((long)tables * size * WorkTable.PreferredStride(size)));
 
     private void Release(int product, int factor)
     {
@@ -93,7 +88,7 @@ internal sealed class StepPower : IDisposable
     private PowerTable Multiply(PowerTable left, PowerTable right)
     {
         var (factor, multiplier, target) = (left.Table, right.Table, EmptyTable());
-        MatrixMultiply.Add(factor, multiplier, target, _extent, _size, _extent, _instructions, _sharing);
+        MatrixMultiply.Add(factor, multiplier, target, _size, _size, _size, _instructions, _sharing);
         var least = new double[_groups is null ? 0 : _size];
         var corrections = new double[_size];
         _sharing.Run((_size + RowsPerPiece - 1) / RowsPerPiece, piece =>
@@ -121,11 +116,11 @@ internal sealed class StepPower : IDisposable
     {
         if (!_unused.TryPop(out var table))
         {
-            _rented.Add(WorkTable.Rent(_extent, _extent));
+            _rented.Add(WorkTable.Rent(_size, _size));
             table = _rented[^1].View;
         }
 
-        table.Row(0, 0, _extent * table.Stride).Clear();
+        table.Row(0, 0, _size * table.Stride).Clear();
         return table;
     }
 
