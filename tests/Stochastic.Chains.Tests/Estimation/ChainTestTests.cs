@@ -99,8 +99,8 @@ public sealed class ChainTestTests
     [InlineData(-1, 1)]
     [InlineData(0, 0)]
     [InlineData(1, 0.38629436111989062)] // 2 ln 2 − 1
-    [InlineData(0.1, 0.0048411977784)] // 1.1 ln 1.1 − 0.1, to 11 digits
-    [InlineData(-0.1, 0.0051755358904)] // 0.9 ln 0.9 + 0.1
+    [InlineData(0.1, 0.0048411977847573460)] // 1.1 ln 1.1 − 0.1
+    [InlineData(-0.1, 0.0051755359079563289)] // 0.9 ln 0.9 + 0.1
     public void Excess_is_that_of_its_formula(double deviation, double expected) =>
         ContingencyTable.Excess(deviation).Should().BeApproximately(expected, Tolerances.PrintedDigits(12));
 
@@ -139,7 +139,7 @@ public sealed class ChainTestTests
         test.Rejects(0.001).Should().BeTrue();
         test.Finding.Should().StartWith("The time already spent in 'on' matters");
         test.Cells.Select(cell => cell.Row).Distinct().Should().Equal("after 1 step", "after 2 steps", "after 3 steps");
-        test.Cells.Select(cell => cell.Observed).Should().Equal(300, 0, 300, 0, 0, 299);
+        test.Cells.Select(cell => cell.Observed).Should().Equal(300, 0, 300, 0, 0, 300);
     }
 
     [Fact]
