@@ -44,6 +44,8 @@ internal static class LibraryAnswers
             ["reliability"] = Reliability,
             ["embedded_step_matrix"] = query => query.Matrix().SelectMany((row, start) =>
                 row.Zip(query.Chain().ToChain().StartingIn(start).AfterTime(query.RationalArgument("step").ToDouble()).ToArray())),
+            ["group_inverse"] = query => query.Matrix().SelectMany(row => row).Zip(query.Chain().ToChain().GroupInverse().Values.ToArray()),
+            ["stationary_derivative"] = StationaryDerivative,
             ["transition_estimate"] = CountAnswers.Probabilities,
             ["pooled_estimate"] = CountAnswers.Probabilities,
             ["standard_errors"] = CountAnswers.StandardErrors,
@@ -65,6 +67,16 @@ internal static class LibraryAnswers
 
     /// <summary>Kinds of questions whose answers are right to an absolute error, because they come of subtractions.</summary>
     public static IReadOnlySet<string> Absolute { get; } = new HashSet<string> { "total_variation", "total_variation_worst", "eigenvalues", "second_eigenvalue" };
+
+    private static IEnumerable<Pair> StationaryDerivative(PublishedQuery query)
+    {
+        var changes = query.HasArgument("direction_triplets")
+            ? query.Arguments.GetProperty("direction_triplets").EnumerateArray()
+                .Select(entry => new ProbabilityChange<int>(entry[0].GetInt32(), entry[1].GetInt32(), Rational.Parse(entry[2].GetString()!).ToDouble()))
+            : query.Arguments.GetProperty("direction").EnumerateArray().SelectMany((row, from) => row.EnumerateArray()
+                .Select((rate, to) => new ProbabilityChange<int>(from, to, rate.GetDouble())));
+        return query.Vector().Zip(query.Chain().ToChain().StationaryDerivative(changes).Values.ToArray());
+    }
 
     private static NStepMatrix<int> NStep(PublishedQuery query) => query.Chain().ToStepChain().NStep(query.IntegerArgument("n"));
 
