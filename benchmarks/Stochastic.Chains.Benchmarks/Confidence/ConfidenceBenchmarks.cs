@@ -26,7 +26,7 @@ public class ConfidenceBenchmarks
     [GlobalSetup]
     public void Setup()
     {
-        var stream = new RandomStream(1);
+        var stream = new RandomNumbers(1);
         var table = new long[States, States];
         for (var row = 0; row < States; row++)
         {

@@ -17,7 +17,7 @@ public class EstimateBenchmarks
     [GlobalSetup]
     public void Setup()
     {
-        var stream = new RandomStream(1);
+        var stream = new RandomNumbers(1);
         _path = [.. Enumerable.Range(0, 1_000_000).Select(_ => stream.NextIndex(States)), .. Enumerable.Range(0, States)];
         _counts = CountWithHistory();
     }

@@ -88,10 +88,21 @@ internal static class HowSure
         #endregion
     }
 
+    public static void Slope()
+    {
+        TransitionCounts<string> counts = Crates;
+        #region slope
+        var ends = new EstimateOptions<string> { Unobserved = UnobservedStates.Absorbing };
+        DeltaConfidence weeks = counts.TimeError("clean", "lost", ends);
+
+        Console.WriteLine($"A crate lives {weeks.Estimate / 52:F0} years, give or take {weeks.StandardError / 52:F0}");
+        #endregion
+    }
+
     public static void Numbers()
     {
         #region numbers
-        var stream = new RandomStream(seed: 42, number: 7);
+        var stream = new RandomNumbers(seed: 42, number: 7);
         Console.WriteLine($"{stream.NextBits():X16} {stream.NextBits():X16}");
         #endregion
     }

@@ -8,8 +8,8 @@ internal static class WhatMattersMost
     {
         Chain<string> pool = InventedChains.Pool;
         #region times
-        // One more crate in a hundred is lost in a week at the shop, and one less comes back dirty.
-        ProbabilityChange<string>[] theft = [new("at shop", "lost", 0.01), new("at shop", "dirty", -0.01)];
+        // One more crate in a thousand is lost in a week at the shop, and one less comes back dirty.
+        ProbabilityChange<string>[] theft = [new("at shop", "lost", 0.001), new("at shop", "dirty", -0.001)];
         StateDerivatives<string> slope = pool.AbsorptionDerivative("lost", theft);
 
         Console.WriteLine($"Ends up lost, from clean: {pool.Absorption().Probability("clean", "lost"):P1}, and {slope["clean"]:P1} more with more theft");

@@ -11,7 +11,7 @@ internal sealed class ChainSampler<TState>(TransitionEstimate<TState> estimate, 
     internal Chain<TState> Draw(int number)
     {
         var rows = estimate.Rows;
-        var stream = new RandomStream(seed, number);
+        var stream = new RandomNumbers(seed, number);
         var values = new double[rows.EntryCount];
         for (var row = 0; row < rows.RowCount; row++)
         {
@@ -33,7 +33,7 @@ internal sealed class ChainSampler<TState>(TransitionEstimate<TState> estimate, 
         return new Chain<TState>(estimate.States, Assemble(rows, values), [], uniformizationRate: null);
     }
 
-    private static void DrawPosterior(RandomStream stream, ReadOnlySpan<long> counts, ReadOnlySpan<double> weights, Span<double> target)
+    private static void DrawPosterior(RandomNumbers stream, ReadOnlySpan<long> counts, ReadOnlySpan<double> weights, Span<double> target)
     {
         for (var k = 0; k < target.Length; k++)
         {
@@ -48,7 +48,7 @@ internal sealed class ChainSampler<TState>(TransitionEstimate<TState> estimate, 
     }
 
     /// <summary>New counts with the same total: each move's given those before it is binomial.</summary>
-    private static void DrawCounts(RandomStream stream, ReadOnlySpan<long> counts, long total, Span<double> target)
+    private static void DrawCounts(RandomNumbers stream, ReadOnlySpan<long> counts, long total, Span<double> target)
     {
         var (trials, rest) = (total, total);
         for (var k = 0; k < target.Length; k++)

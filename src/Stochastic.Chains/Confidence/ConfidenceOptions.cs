@@ -56,7 +56,7 @@ public sealed record ConfidenceOptions<TState>
     }
     = UsualDraws;
 
-    /// <summary>Gets the seed of the draws. Draw number k uses the stream number k of a <see cref="RandomStream"/>. Default: 1.</summary>
+    /// <summary>Gets the seed of the draws. Draw number k uses the stream number k of a <see cref="RandomNumbers"/>. Default: 1.</summary>
     public long Seed { get; init; } = 1;
 
     /// <summary>

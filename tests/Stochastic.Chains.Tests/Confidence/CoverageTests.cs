@@ -1,7 +1,6 @@
 using MathNet.Numerics.Distributions;
 using Stochastic.Chains.Estimation;
 using Stochastic.Chains.Simulation;
-using Stochastic.Chains.Tests.Support;
 using Xunit.Abstractions;
 
 namespace Stochastic.Chains.Tests.Confidence;
@@ -93,7 +92,7 @@ public sealed class CoverageTests(ITestOutputHelper output)
         var held = 0;
         for (var round = 0; round < Rounds; round++)
         {
-            var confidence = DrawCounts(truth, observations, new RandomStream(2026, round)).Confidence(answer, options with { Seed = round });
+            var confidence = DrawCounts(truth, observations, new RandomNumbers(2026, round)).Confidence(answer, options with { Seed = round });
             held += confidence.Interval.Contains(trueAnswer) ? 1 : 0;
         }
 
@@ -101,7 +100,7 @@ public sealed class CoverageTests(ITestOutputHelper output)
     }
 
     /// <summary>Counts with so many observations in each row, as the true chain would give them.</summary>
-    private static TransitionCounts<int> DrawCounts(Chain<int> truth, long[] observations, RandomStream stream)
+    private static TransitionCounts<int> DrawCounts(Chain<int> truth, long[] observations, RandomNumbers stream)
     {
         var table = new long[truth.StateCount, truth.StateCount];
         for (var row = 0; row < truth.StateCount; row++)

@@ -6,6 +6,7 @@ namespace Stochastic.Chains.Tests.Estimation;
 /// <summary>Tests of order, homogeneity and stay lengths. Paths are invented; published tables are in the sweep of published cases.</summary>
 public sealed class ChainTestTests
 {
+    private static readonly string[] Round = ["on", "on", "on", "off"];
     private static readonly PathOptions<string> Kept = new() { KeepsHistory = true };
 
     [Fact]
@@ -133,7 +134,7 @@ public sealed class ChainTestTests
     [Fact]
     public void Stays_of_fixed_length_are_not_those_of_a_chain()
     {
-        var path = Enumerable.Range(0, 300).SelectMany(_ => new[] { "on", "on", "on", "off" });
+        var path = Enumerable.Range(0, 300).SelectMany(_ => Round);
         var test = TransitionCounts.FromPaths([path], Kept).TestStayLengths("on");
 
         test.Rejects(0.001).Should().BeTrue();

@@ -17,12 +17,12 @@ namespace Stochastic.Chains;
 /// </remarks>
 /// <example>
 /// <code>
-/// var stream = new RandomStream(seed: 42, number: 7);
+/// var stream = new RandomNumbers(seed: 42, number: 7);
 /// double between0And1 = stream.NextDouble();
 /// int side = stream.NextIndex(6) + 1;
 /// </code>
 /// </example>
-public sealed class RandomStream
+public sealed class RandomNumbers
 {
     private const double UnitOfDouble = 1.0 / (1L << 53);
 
@@ -34,7 +34,7 @@ public sealed class RandomStream
 
     /// <summary>Starts the stream number 0 of a seed.</summary>
     /// <param name="seed">Any number.</param>
-    public RandomStream(long seed)
+    public RandomNumbers(long seed)
         : this(seed, 0)
     {
     }
@@ -42,7 +42,7 @@ public sealed class RandomStream
     /// <summary>Starts one of the independent streams of a seed.</summary>
     /// <param name="seed">Any number.</param>
     /// <param name="number">The number of the stream, any.</param>
-    public RandomStream(long seed, long number)
+    public RandomNumbers(long seed, long number)
     {
         Seed = seed;
         Number = number;

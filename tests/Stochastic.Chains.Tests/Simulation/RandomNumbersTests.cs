@@ -4,7 +4,7 @@ using Stochastic.Chains.Tests.Support;
 
 namespace Stochastic.Chains.Tests.Simulation;
 
-public sealed class RandomStreamTests
+public sealed class RandomNumbersTests
 {
     [Theory]
     [InlineData(0, 0, 0, 0xe169c58d_6627e8d5, 0x9b00dbd8_bc57ac4c)]
@@ -21,7 +21,7 @@ public sealed class RandomStreamTests
     public void A_stream_gives_the_same_integers_everywhere_and_in_every_version()
     {
         // Recomputed from the published recurrence by an independent script. A change here breaks a promise to users.
-        var stream = new RandomStream(42, 7);
+        var stream = new RandomNumbers(42, 7);
 
         Enumerable.Range(0, 5).Select(_ => stream.NextBits()).Should().Equal(0xe55410cc67ee6f2cUL, 0x557398d36c7eca35UL, 0x600f6196e5dde940UL, 0x2c8ed8398fcdf8f1UL, 0xf000aacd24ecfc6eUL);
         (stream.Seed, stream.Number).Should().Be((42, 7));
@@ -30,17 +30,17 @@ public sealed class RandomStreamTests
     [Fact]
     public void Streams_and_seeds_differ_and_a_seed_alone_is_stream_zero()
     {
-        static ulong[] First(RandomStream stream) => [.. Enumerable.Range(0, 4).Select(_ => stream.NextBits())];
+        static ulong[] First(RandomNumbers stream) => [.. Enumerable.Range(0, 4).Select(_ => stream.NextBits())];
 
-        First(new RandomStream(5)).Should().Equal(First(new RandomStream(5, 0)));
-        First(new RandomStream(5, 1)).Should().NotIntersectWith(First(new RandomStream(5, 2)));
-        First(new RandomStream(-1, 1)).Should().NotIntersectWith(First(new RandomStream(1, 1)));
+        First(new RandomNumbers(5)).Should().Equal(First(new RandomNumbers(5, 0)));
+        First(new RandomNumbers(5, 1)).Should().NotIntersectWith(First(new RandomNumbers(5, 2)));
+        First(new RandomNumbers(-1, 1)).Should().NotIntersectWith(First(new RandomNumbers(1, 1)));
     }
 
     [Fact]
     public void Doubles_and_indices_stay_in_range_and_are_even()
     {
-        var stream = new RandomStream(2026);
+        var stream = new RandomNumbers(2026);
         var faces = new int[6];
         for (var k = 0; k < 60_000; k++)
         {
@@ -97,16 +97,16 @@ public sealed class RandomStreamTests
     [Fact]
     public void Certain_and_impossible_trials_are_not_drawn()
     {
-        var stream = new RandomStream(1);
+        var stream = new RandomNumbers(1);
 
         stream.NextBinomial(1000, 0).Should().Be(0);
         stream.NextBinomial(1000, 1).Should().Be(1000);
         stream.NextBinomial(0, 0.5).Should().Be(0);
     }
 
-    private static double[] Draw(int count, Func<RandomStream, double> draw)
+    private static double[] Draw(int count, Func<RandomNumbers, double> draw)
     {
-        var stream = new RandomStream(20260101);
+        var stream = new RandomNumbers(20260101);
         return [.. Enumerable.Range(0, count).Select(_ => draw(stream))];
     }
 
