@@ -11,7 +11,7 @@ internal static class Populations
         PopulationForecast<string> plan = pool.StartingWith(("clean", 1200), ("at shop", 2600), ("dirty", 200)).Forecast(10);
 
         Console.WriteLine(plan);
-        Console.WriteLine($"Clean in week 10: {plan.Expected(10, "clean"):F0} expected");
+        Console.WriteLine($"Clean in week 10: {plan.Expected("clean", 10):F0} expected");
         #endregion
     }
 
@@ -20,7 +20,7 @@ internal static class Populations
         var pool = InventedChains.Pool;
         #region scatter
         PopulationForecast<string> plan = pool.StartingWith(("clean", 120), ("at shop", 260), ("dirty", 20)).Forecast(10);
-        CountDistribution clean = plan.Count(10, "clean");
+        CountDistribution clean = plan.Count("clean", 10);
 
         Console.WriteLine(clean);
         Console.WriteLine($"With 95 % probability at least {clean.Quantile(0.05)} are clean.");
@@ -39,7 +39,7 @@ internal static class Populations
             .WithLosses(("at shop", 0.002));
         PopulationForecast<string> plan = crates.Forecast(8);
 
-        Console.WriteLine($"At shops in week 8: {plan.Expected(8, "at shop"):F0}, give or take {plan.StandardDeviation(8, "at shop"):F0}");
+        Console.WriteLine($"At shops in week 8: {plan.Expected("at shop", 8):F0}, give or take {plan.StandardDeviation("at shop", 8):F0}");
         Console.WriteLine($"Never seen again: {plan.Losses(8):F1}");
         #endregion
     }

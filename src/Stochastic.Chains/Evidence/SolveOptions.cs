@@ -22,7 +22,17 @@ public sealed record SolveOptions
     /// Gets the largest working memory of one solve, in bytes. A solve that needs more is refused with the size it would need,
     /// before it takes any. Default: 2 GiB.
     /// </summary>
-    public long MemoryLimit { get; init; } = 2L << 30;
+    /// <exception cref="ArgumentOutOfRangeException">Set to less than 0.</exception>
+    public long MemoryLimit
+    {
+        get;
+        init
+        {
+            ArgumentOutOfRangeException.ThrowIfNegative(value);
+            field = value;
+        }
+    }
+    = 2L << 30;
 
     /// <summary>
     /// Gets the number of threads that a solve may use, 1 or more. The answer has the same bits for any number. Default: 1, so that

@@ -30,7 +30,7 @@ internal static partial class Messages
 
     internal static string TimedChainHasNoSteps(double rate) =>
         $"The chain was made from rates, so its time is not counted in steps (it makes {Text.Short(rate)} of them per unit of time on average, stays included). " +
-        "Ask MakeAbsorbing(targets).StartingIn(from).AfterTime(t) for the probability of having arrived by a time.";
+        "Ask StartingIn(from).AfterTime(t) for where things stand at a time, and MakeAbsorbing(targets).StartingIn(from).AfterTime(t) for what has arrived by then.";
 
     internal static string ProbabilityBetweenZeroAndOne(double value) => $"The probability is {Text.Number(value)}. Give a number above 0 and below 1.";
 
@@ -50,12 +50,41 @@ internal static partial class Messages
         $"The classes of {Text.Quoted(first)} and {Text.Quoted(second)} are left equally slowly, so where things stand depends on the start for ever. " +
         "Ask StartingIn(…).After(n) for a given start.";
 
+    internal const string NothingStays =
+        "The transient states are all left for good after a few steps, so nothing is still in after many. Ask StartingIn(…).After(n) for the first steps.";
+
     internal const string SlowQuasiStationary = "Two parts of the transient states are left almost equally slowly. Ask StartingIn(…).After(n) for a given start.";
+
+    internal const string NothingLeft = "All states are left out. Keep at least one.";
+
+    internal const string ChangeTheRates = "The chain was made from rates. Change the rates and make it again with Chain.FromRates.";
+
+    internal const string NotReversed =
+        "Some states cannot be reached from some others, so the chain has no moves backwards from where it never is. Ask Without(…) or Censor(…) for the chain of one class first.";
+
+    internal static string OnlyMovesOut(object state) =>
+        $"{Text.Quoted(state)} can only move into states that are left out. Leave it out too, or give it another row with With(…) first.";
+
+    internal static string MayNeverReturn(object state) =>
+        $"The chain may enter {Text.Quoted(state)} and never come back to the states that are looked at. Look at it too.";
+
+    internal static string ShiftToItself(object state) => $"Both moves lead to {Text.Quoted(state)}. Name two different states.";
+
+    internal static string ShiftTooMuch(object from, object takenFrom, double amount, double available) =>
+        $"{Text.Number(amount)} cannot be taken from the move {Text.Quoted(from)} to {Text.Quoted(takenFrom)}, whose probability is {Text.Number(available)}. " +
+        "Give an amount above 0 that is not larger.";
+
+    internal static string NotLumpable(object one, double high, object other, double low, object group, object into) =>
+        $"{Text.Quoted(one)} and {Text.Quoted(other)} are both in the group {Text.Quoted(group)}, but move into the group {Text.Quoted(into)} with the probabilities " +
+        $"{Text.Number(high)} and {Text.Number(low)}. Separate them, or ask CoarsestLumping(…) for groups that can be taken together.";
 
     internal const string NoTargets = "No target states are given. Name at least one.";
 
     internal static string TransientEnd(object state) =>
         $"{Text.Quoted(state)} is transient: nothing ends there. Ask TimeTo({Text.Quoted(state)}).ReachingProbability for the probability of ever reaching it.";
+
+    internal static string TooManySteps(long steps, long most) =>
+        $"{Text.Count(steps, "step", "steps")} one by one take too long; the most is {Text.Count(most)}. Ask NStep({Text.Count(steps)}), which squares, or LongRun().";
 
     internal static string NegativeSteps(long steps) => $"The number of steps is {Text.Count(steps)}. Give 0 or more.";
 

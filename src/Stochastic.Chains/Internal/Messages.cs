@@ -106,9 +106,9 @@ internal static partial class Messages
         $"The probabilities sum to {Text.Number(sum)}. They must sum to 1; use Distribution.FromWeights to divide counts or weights by their sum.";
 
     internal static string DifferentStates(int mine, int other) =>
-        $"The two distributions are not over the same states in the same order ({Text.Count(mine, "state", "states")} and {Text.Count(other)}). Compare distributions of one chain.";
+        $"The two distributions are not over the same states in the same order ({Text.Count(mine, "state", "states")} and {Text.Count(other)}). Use distributions over the states of one chain.";
 
     internal static string MemoryLimit(int states, long required, long limit) =>
-        $"A direct solve over {Text.Count(states, "state", "states")} needs {Text.Count(required)} bytes of working memory; the limit is {Text.Count(limit)}. " +
+        $"This takes, for {Text.Count(states, "state", "states")}, {Text.Count(required)} bytes of working memory; the limit is {Text.Count(limit)}. " +
         "Raise SolveOptions.MemoryLimit if the machine has it.";
 }

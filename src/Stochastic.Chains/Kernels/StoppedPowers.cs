@@ -7,6 +7,8 @@ namespace Stochastic.Chains.Kernels;
 /// </summary>
 internal sealed class StoppedPowers : IDisposable
 {
+    private const int MostPowers = 1023;
+
     private readonly List<WorkTable> _powers = [];
     private readonly int _states;
     private readonly WorkSharing _sharing;
@@ -32,15 +34,14 @@ internal sealed class StoppedPowers : IDisposable
     public void Dispose() => _powers.ForEach(power => power.Dispose());
 
     /// <summary>
-    /// The smallest number of steps, a whole number up to 2⁵³ and rounded beyond, in which those starting in a state have arrived with at
-    /// least a probability; +∞ when they never do.
+    /// The smallest number of steps in which those starting in a state have arrived as asked, as far as rounding lets one tell; +∞ when they never do.
     /// </summary>
-    internal double Quantile(int start, double probability, CancellationToken cancellation)
+    internal double Quantile(int start, QuantileQuestion question, CancellationToken cancellation)
     {
-        while (_powers[^1].View[start, _states] < probability)
+        while (!question.IsReached(_powers[^1].View[start, _states], OnTheWay(_powers[^1].View, start)))
         {
             cancellation.ThrowIfCancellationRequested();
-            if (_powers[^1].View[start, _states] + OnTheWay(start) < probability || _powers.Count > 1023)
+            if (OnTheWay(_powers[^1].View, start) == 0 || _powers.Count > MostPowers)
             {
                 return double.PositiveInfinity;
             }
@@ -49,13 +50,13 @@ internal sealed class StoppedPowers : IDisposable
             _powers.Add(Square(_powers[^1].View));
         }
 
-        return 1 + StepsBefore(start, probability);
+        return 1 + StepsBefore(start, question);
     }
 
-    private double OnTheWay(int start) => VectorLoops.Sum(_powers[^1].View.Row(start, 0, _states));
+    private double OnTheWay(MatrixView power, int state) => VectorLoops.Sum(power.Row(state, 0, _states));
 
-    /// <summary>The largest number of steps in which fewer than the share have arrived.</summary>
-    private double StepsBefore(int start, double probability)
+    /// <summary>The largest number of steps in which fewer have arrived than asked.</summary>
+    private double StepsBefore(int start, QuantileQuestion question)
     {
         var (steps, arrived) = (0.0, default(CompensatedSum));
         var (current, next) = (new double[_states], new double[_states]);
@@ -63,13 +64,14 @@ internal sealed class StoppedPowers : IDisposable
         for (var power = _powers.Count - 2; power >= 0; power--)
         {
             var view = _powers[power].View;
-            var more = arrived;
+            var (more, onTheWay) = (arrived, default(CompensatedSum));
             for (var state = 0; state < _states; state++)
             {
                 more.Add(current[state] * view[state, _states]);
+                onTheWay.Add(current[state] * OnTheWay(view, state));
             }
 
-            if (more.Value >= probability)
+            if (question.IsReached(more.Value, onTheWay.Value))
             {
                 continue;
             }

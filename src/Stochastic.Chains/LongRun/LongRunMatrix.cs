@@ -1,5 +1,6 @@
 using System.Diagnostics;
 using System.Globalization;
+using MathNet.Numerics.LinearAlgebra;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.LongRun;
 
@@ -43,6 +44,10 @@ public sealed class LongRunMatrix<TState> : ICertified
     /// <summary>Gets the shares, row-major: a row for each start, a column for each state. Computed when first asked for; takes 8 · states² bytes.</summary>
     /// <exception cref="MemoryLimitException">The table takes more memory than the options allowed; read single entries or rows.</exception>
     public ReadOnlySpan<double> Values => _values.Value;
+
+    /// <summary>Copies the shares into a new dense MathNet.Numerics matrix: row = from, column = where time is spent.</summary>
+    /// <exception cref="MemoryLimitException">The full matrix takes more memory than allowed.</exception>
+    public Matrix<double> ToMatrix() => Matrix<double>.Build.DenseOfRowMajor(States.Count, States.Count, _values.Value);
 
     /// <summary>Gets whether the n-step matrices settle: whether no recurrent class moves in cycles.</summary>
     public bool HasLimit => _parts.Classes.All(group => group.Period == 1);

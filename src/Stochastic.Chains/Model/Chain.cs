@@ -1,6 +1,7 @@
 using System.Collections.Concurrent;
 using System.Diagnostics;
 using MathNet.Numerics.LinearAlgebra;
+using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains;
 
@@ -132,6 +133,16 @@ public sealed class Chain<TState>
         {
             _derived.TryRemove(KeyValuePair.Create(typeof(TFact), fact));
             throw;
+        }
+    }
+
+    /// <summary>Refuses a question that counts steps of a chain whose time is not counted in steps.</summary>
+    /// <exception cref="InvalidOperationException">The chain was made from rates.</exception>
+    internal void RequireCountedSteps()
+    {
+        if (UniformizationRate is { } rate)
+        {
+            throw new InvalidOperationException(Messages.TimedChainHasNoSteps(rate));
         }
     }
 

@@ -1,5 +1,6 @@
 using System.Diagnostics;
 using System.Globalization;
+using MathNet.Numerics.LinearAlgebra;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Passage;
 
@@ -136,6 +137,10 @@ public sealed class Absorption<TState> : ICertified
     /// Makes the chain of only those futures that end in one given class: each move is as likely as before times how much likelier the end becomes
     /// with it (Doob's transform).
     /// </summary>
+    /// <remarks>
+    /// Its probabilities carry rounding and the error bound of this result; what is asked of it takes them as exact. For the mean time with a bound that counts that too ask
+    /// <see cref="StepsIfInto"/>.
+    /// </remarks>
     /// <param name="into">A state of that class.</param>
     /// <returns>A chain over the class and the transient states from which it can be entered, in the order of the old one.</returns>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
@@ -143,6 +148,9 @@ public sealed class Absorption<TState> : ICertified
     /// <exception cref="NumericalRangeException">A probability of the new chain is smaller than a double can hold.</exception>
     /// <example><code>Chain&lt;string&gt; thoseLost = pool.Absorption().Conditional("lost");</code></example>
     public Chain<TState> Conditional(TState into) => _question.Conditional(EndOf(into), ProbabilitiesOf(EndOf(into)));
+
+    /// <summary>Copies the probabilities of the ends into a new dense MathNet.Numerics matrix: a row for each state, a column for each of <see cref="Ends"/>.</summary>
+    public Matrix<double> ToMatrix() => Matrix<double>.Build.DenseOfRowMajor(States.Count, Ends.Count, _probabilities);
 
     /// <summary>A small table of the transient states, the same in every culture.</summary>
     public override string ToString()

@@ -1,4 +1,6 @@
+using System.Collections;
 using System.Diagnostics;
+using System.Diagnostics.CodeAnalysis;
 using System.Globalization;
 using Stochastic.Chains.Internal;
 
@@ -14,7 +16,8 @@ namespace Stochastic.Chains;
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
-public sealed class FirstOfTwo<TState> : ICertified
+[SuppressMessage("Naming", "CA1710", Justification = "That it enumerates is a convenience.")]
+public sealed class FirstOfTwo<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
     private const int LargestTable = 24;
@@ -64,6 +67,11 @@ public sealed class FirstOfTwo<TState> : ICertified
     /// <param name="from">The state to start in.</param>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
     public double ProbabilityOfNeither(TState from) => _neither[States.Require(from)];
+
+    /// <summary>Enumerates the states with their probability of the first, in state order.</summary>
+    public IEnumerator<KeyValuePair<TState, double>> GetEnumerator() => States.Select((state, position) => KeyValuePair.Create(state, _first[position])).GetEnumerator();
+
+    IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the probabilities, the same in every culture.</summary>
     public override string ToString()

@@ -64,22 +64,24 @@ internal sealed class HittingQuestion<TState>
 
     internal PassageTimeDistribution<TState> Distribution(TState from, int maxSteps, SolveOptions options)
     {
-        RequireSteps();
+        _chain.RequireCountedSteps();
         return PassageTimes<TState>.Distribution(_chain, Survivors(from), from, maxSteps, options);
     }
 
     internal double Quantile(TState from, double probability, double reaching, SolveOptions options)
     {
-        RequireSteps();
-        if (probability > reaching)
+        _chain.RequireCountedSteps();
+        var position = _chain.States.Require(from);
+        var question = new QuantileQuestion(probability, reaching, _split.IsTarget[position] || _split.IsCertain[position]);
+        if (question.IsBeyond)
         {
             return double.PositiveInfinity;
         }
 
         var members = OnTheWay();
-        var start = Array.IndexOf(members, _chain.States.Require(from));
+        var start = Array.IndexOf(members, position);
         return PassageTimes<TState>.Quantile(
-            () => Powers(members, options), Survivors(from), probability, start, members.Length, _chain.TransitionCount, options);
+            () => Powers(members, options), Survivors(from), question, start, members.Length, _chain.TransitionCount, options);
     }
 
     private static int[] Positions(bool[] flags) => [.. Enumerable.Range(0, flags.Length).Where(position => flags[position])];
@@ -95,7 +97,7 @@ internal sealed class HittingQuestion<TState>
     private SurvivorSteps Survivors(TState from)
     {
         int[] lost = [.. Enumerable.Range(0, _chain.StateCount).Where(state => !_split.IsTarget[state] && !_split.IsCertain[state] && !_split.IsPossible[state])];
-        return new SurvivorSteps(_chain.Derive(static chain => new StepMatrix(chain.Matrix)), _targets, lost, _chain.States.Require(from));
+        return new SurvivorSteps(StepMatrix.Of(_chain), _targets, lost, _chain.States.Require(from));
     }
 
     private StoppedPowers Powers(int[] members, SolveOptions options)
@@ -103,7 +105,7 @@ internal sealed class HittingQuestion<TState>
         var bytes = sizeof(double) * (long)members.Length * WorkTable.PreferredStride(StoppedPowers.Columns(members.Length));
         options.RequireMemory(members.Length, bytes);
         var rates = RateTable.WithExits(_chain.Matrix, members, 2, state => _split.IsTarget[state] ? 0 : 1);
-        var steps = _chain.Derive(static chain => new StepMatrix(chain.Matrix));
+        var steps = StepMatrix.Of(_chain);
         var table = WorkTable.Rent(members.Length, StoppedPowers.Columns(members.Length));
         rates.CopyTo(table.View);
         for (var k = 0; k < members.Length; k++)
@@ -113,13 +115,5 @@ internal sealed class HittingQuestion<TState>
 
         return new StoppedPowers(
             table, members.Length, new WorkSharing(options.Parallelism, options.CancellationToken), count => options.RequireMemory(members.Length, count * bytes));
-    }
-
-    private void RequireSteps()
-    {
-        if (_chain.UniformizationRate is { } rate)
-        {
-            throw new InvalidOperationException(Messages.TimedChainHasNoSteps(rate));
-        }
     }
 }

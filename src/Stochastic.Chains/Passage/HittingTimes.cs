@@ -188,8 +188,9 @@ public sealed class HittingTimes<TState> : ICertified, IEnumerable<KeyValuePair<
     /// <param name="from">The state to start in.</param>
     /// <param name="probability">Above 0 and below 1; 0.5 gives the median.</param>
     /// <returns>
-    /// The smallest number of steps within which the target is reached with at least that probability; a whole number up to 2⁵³. +∞ when it is
-    /// not reached with that probability at all.
+    /// The smallest number of steps within which the target is reached with at least that probability, up to the rounding of the probabilities: among very
+    /// many steps the neighbours of the smallest cannot be told from it, about 10⁻¹³ of the number. +∞ when it is not reached with that
+    /// probability at all, nor with one that rounding cannot tell from that of ever reaching it, unless all that reach it do so within a few steps.
     /// </returns>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
     /// <exception cref="ArgumentOutOfRangeException">The probability is not above 0 and below 1.</exception>

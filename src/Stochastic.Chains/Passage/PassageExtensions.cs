@@ -69,6 +69,45 @@ public static class PassageExtensions
             : throw new ArgumentException(Messages.NoTargets, nameof(targets));
     }
 
+    /// <summary>Finds how likely it is that a state is first reached with exactly, or within, each number of steps, without solving for mean times.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">A chain of any size that was given per step.</param>
+    /// <param name="from">The state to start in.</param>
+    /// <param name="target">The state to reach.</param>
+    /// <param name="maxSteps">The horizon, 0 or more steps.</param>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The horizon is negative.</exception>
+    /// <exception cref="InvalidOperationException">The chain was made from rates, so its time is not counted in steps.</exception>
+    /// <exception cref="MemoryLimitException">The horizon takes more memory than allowed.</exception>
+    /// <remarks>What <c>TimeTo(target).Distribution(from, maxSteps)</c> gives, for chains that are too large for a direct solve: O(transitions) a step.</remarks>
+    /// <example><code>double withinAYear = network.FirstPassageDistribution("start", "goal", 365).CumulativeProbability(365);</code></example>
+    public static PassageTimeDistribution<TState> FirstPassageDistribution<TState>(this Chain<TState> chain, TState from, TState target, int maxSteps)
+        where TState : notnull => FirstPassageDistribution(chain, from, target, maxSteps, new SolveOptions());
+
+    /// <summary>Finds how likely it is that a state is first reached with exactly, or within, each number of steps, with options.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">A chain of any size that was given per step.</param>
+    /// <param name="from">The state to start in.</param>
+    /// <param name="target">The state to reach.</param>
+    /// <param name="maxSteps">The horizon, 0 or more steps.</param>
+    /// <param name="options">Evidence, cancellation, progress and memory.</param>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The horizon is negative.</exception>
+    /// <exception cref="InvalidOperationException">The chain was made from rates, so its time is not counted in steps.</exception>
+    /// <exception cref="MemoryLimitException">The horizon takes more memory than allowed.</exception>
+    /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
+    public static PassageTimeDistribution<TState> FirstPassageDistribution<TState>(
+        this Chain<TState> chain, TState from, TState target, int maxSteps, SolveOptions options)
+        where TState : notnull
+    {
+        ArgumentNullException.ThrowIfNull(chain);
+        ArgumentNullException.ThrowIfNull(options);
+        int[] targets = [chain.States.Require(target)];
+        return maxSteps >= 0
+            ? new HittingQuestion<TState>(chain, targets, TargetSplit.Of(chain, targets), options).Distribution(from, maxSteps, options)
+            : throw new ArgumentOutOfRangeException(nameof(maxSteps), maxSteps, Messages.NegativeSteps(maxSteps));
+    }
+
     /// <summary>Finds where things end: for each transient state, which recurrent class is entered and how long that takes.</summary>
     /// <typeparam name="TState">The type of a state.</typeparam>
     /// <param name="chain">Any chain; without transient states every answer follows from the structure.</param>
@@ -110,6 +149,33 @@ public static class PassageExtensions
     public static FirstOfTwo<TState> Before<TState>(this Chain<TState> chain, TState first, TState second)
         where TState : notnull => BeforeAny(chain, [first], [second], new SolveOptions());
 
+    /// <summary>Finds, from every state, how likely one state is reached before another, with options.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">Any chain.</param>
+    /// <param name="first">The state that is to come first.</param>
+    /// <param name="second">The state that must not come before it.</param>
+    /// <param name="options">Evidence, cancellation and memory.</param>
+    /// <exception cref="ArgumentException">Both are the same state.</exception>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="MemoryLimitException">Too many states lie before the two for a direct solve.</exception>
+    /// <exception cref="NumericalRangeException">A probability is smaller than a double can hold.</exception>
+    /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
+    public static FirstOfTwo<TState> Before<TState>(this Chain<TState> chain, TState first, TState second, SolveOptions options)
+        where TState : notnull => BeforeAny(chain, [first], [second], options);
+
+    /// <summary>Finds, from every state, how likely one of some states is reached before any of some others.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="chain">Any chain.</param>
+    /// <param name="firsts">The states of which one is to come first; at least one.</param>
+    /// <param name="seconds">The states that must not come before; at least one, none of them among the firsts.</param>
+    /// <exception cref="ArgumentException">A set is empty, or a state is in both.</exception>
+    /// <exception cref="UnknownStateException">A label is none of the chain's states.</exception>
+    /// <exception cref="MemoryLimitException">Too many states lie before them for a direct solve.</exception>
+    /// <exception cref="NumericalRangeException">A probability is smaller than a double can hold.</exception>
+    /// <example><code>double keptInUse = pool.BeforeAny(["clean", "dirty"], ["lost", "scrapped"]).Probability("in repair");</code></example>
+    public static FirstOfTwo<TState> BeforeAny<TState>(this Chain<TState> chain, IEnumerable<TState> firsts, IEnumerable<TState> seconds)
+        where TState : notnull => BeforeAny(chain, firsts, seconds, new SolveOptions());
+
     /// <summary>Finds, from every state, how likely one of some states is reached before any of some others, with options.</summary>
     /// <typeparam name="TState">The type of a state.</typeparam>
     /// <param name="chain">Any chain.</param>
@@ -129,6 +195,7 @@ public static class PassageExtensions
         ArgumentNullException.ThrowIfNull(firsts);
         ArgumentNullException.ThrowIfNull(seconds);
         ArgumentNullException.ThrowIfNull(options);
+        options.CancellationToken.ThrowIfCancellationRequested();
         int[] first = [.. firsts.Select(chain.States.Require).Distinct()];
         int[] second = [.. seconds.Select(chain.States.Require).Distinct()];
         if (first.Length == 0 || second.Length == 0)

@@ -1,4 +1,6 @@
+using System.Collections;
 using System.Diagnostics;
+using System.Diagnostics.CodeAnalysis;
 using System.Globalization;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Kernels;
@@ -10,7 +12,7 @@ namespace Stochastic.Chains;
 /// <remarks>
 /// Times are counted in steps, or in the unit of the rates when the chain was made from rates. Where the mean is infinite, so is
 /// everything else. The certificate bounds the errors of the standard deviations, its relative bound those of the variances as well; its residual
-/// is that of the equations of the third moments, which are made from both. Immutable and safe for concurrent use.
+/// is that of the equations of the third moments, which are made from both and carry no bound of their own. Immutable and safe for concurrent use.
 /// </remarks>
 /// <example>
 /// <code>
@@ -19,7 +21,8 @@ namespace Stochastic.Chains;
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
-public sealed class PassageMoments<TState> : ICertified
+[SuppressMessage("Naming", "CA1710", Justification = "That it enumerates is a convenience.")]
+public sealed class PassageMoments<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
     private const int LargestTable = 24;
@@ -65,11 +68,16 @@ public sealed class PassageMoments<TState> : ICertified
     /// <exception cref="NumericalRangeException">It is larger than a double can hold; its root, <see cref="StandardDeviation"/>, is not.</exception>
     public double Variance(TState from) => InRange(_variances, from);
 
-    /// <summary>Gets the mean of the third power of the time, in cubed steps or units of time.</summary>
+    /// <summary>Gets the mean of the third power of the time, in cubed steps or units of time. Its error is not covered by the certificate.</summary>
     /// <param name="from">The state to start in.</param>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
     /// <exception cref="NumericalRangeException">It is larger than a double can hold.</exception>
     public double ThirdMoment(TState from) => InRange(_thirdMoments, from);
+
+    /// <summary>Enumerates the states with their standard deviation, in state order.</summary>
+    public IEnumerator<KeyValuePair<TState, double>> GetEnumerator() => States.Select((state, position) => KeyValuePair.Create(state, _deviations[position])).GetEnumerator();
+
+    IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of means and standard deviations, the same in every culture.</summary>
     public override string ToString()
@@ -83,6 +91,12 @@ public sealed class PassageMoments<TState> : ICertified
         var rest = States.Count - LargestTable;
         return rest > 0 ? $"{table}{Environment.NewLine}… and {Text.Count(rest)} more states" : table.ToString();
     }
+
+    /// <summary>The variance by position, of any magnitude; nothing where the mean is infinite.</summary>
+    internal ScaledDoubleDouble WideVariance(int state) => _variances[state];
+
+    /// <summary>The mean by position.</summary>
+    internal double MeanAt(int state) => _means[state];
 
     private double InRange(ScaledDoubleDouble[] values, TState from)
     {

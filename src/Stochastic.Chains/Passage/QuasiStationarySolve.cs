@@ -5,8 +5,8 @@ namespace Stochastic.Chains.Passage;
 
 /// <summary>The quasi-stationary distribution by inverse iteration with the subtraction-free factors.</summary>
 /// <remarks>
-/// x · A⁻¹ has the same vector for its largest eigenvalue 1 / (1 − λ), so that x ← x · A⁻¹ converges to it by the factor (1 − λ) / (1 − λ₂), fast where ends
-/// are rare. A⁻¹ is not negative: for any positive x the ratios (x · A⁻¹)ᵢ / xᵢ enclose that eigenvalue (Collatz 1942; Wielandt 1950).
+/// x · A⁻¹ has the same vector for its largest eigenvalue 1 / (1 − λ), so that x ← x · A⁻¹ · P converges to it by the factor (1 − λ) λ₂ / (1 − λ₂) λ: A⁻¹ is fast where ends
+/// are rare, the step P where they are not. A⁻¹ is not negative: for any positive x the ratios (x · A⁻¹)ᵢ / xᵢ enclose that eigenvalue (Collatz 1942; Wielandt 1950).
 /// </remarks>
 internal static class QuasiStationarySolve<TState>
     where TState : notnull
@@ -24,6 +24,11 @@ internal static class QuasiStationarySolve<TState>
             throw new ChainStructureException(Messages.NothingToLeave, chain.States.Take(1).Cast<object>());
         }
 
+        if (transient.All(group => group.Period == 0))
+        {
+            throw new ChainStructureException(Messages.NothingStays, [transient[0].States[0]]);
+        }
+
         var slowest = transient.Length == 1 ? transient[0] : Slowest(chain, transient, options);
         var reached = chain.Matrix.OnGraph<bool[], Reachability>(new Reachability(slowest.Members.Take(1)));
         int[] members = [.. structure.TransientPositions.Where(state => reached[state])];
@@ -31,7 +36,7 @@ internal static class QuasiStationarySolve<TState>
         var isSlowest = slowest.Members.ToHashSet();
         var start = Array.ConvertAll(members, member => isSlowest.Contains(member) ? 1.0 : 0);
         var (shares, iterations, isConverged) = Iterate(system, start, options);
-        var (low, high, next) = Enclose(system, shares);
+        var (low, high, next, error) = Enclose(system, shares);
         var values = new double[chain.StateCount];
         for (var k = 0; k < members.Length; k++)
         {
@@ -48,19 +53,24 @@ internal static class QuasiStationarySolve<TState>
             Iterations = iterations,
         };
         return isConverged
-            ? new(chain.States, values, decay, DecayBound(system, low, high, options), certificate)
+            ? new(chain.States, values, decay, DecayBound(error, low, high, options), certificate)
             : throw new ConvergenceException(
                 Messages.NotConverged(certificate.Method, iterations, (high - low) / low, Messages.SlowQuasiStationary), values, certificate, Messages.SlowQuasiStationary);
     }
 
+    /// <summary>
+    /// The class that is left most slowly. Of several that are left equally slowly the one counts into which all the others lead: what has come there
+    /// outnumbers what is still before it more and more.
+    /// </summary>
     private static CommunicatingClass<TState> Slowest(Chain<TState> chain, CommunicatingClass<TState>[] classes, SolveOptions options)
     {
         var stays = Array.ConvertAll(classes, group => (Class: group, Stay: StayOf(chain, group, options)));
-        Array.Sort(stays, (one, other) => other.Stay.High.CompareTo(one.Stay.High));
-        return stays[0].Stay.Low > stays[1].Stay.High
-            ? stays[0].Class
-            : throw new ChainStructureException(
-                Messages.SeveralSlowestClasses(stays[0].Class.States[0], stays[1].Class.States[0]), [stays[0].Class.States[0], stays[1].Class.States[0]]);
+        var longest = stays.Max(stay => stay.Stay.Low);
+        var tied = stays.Where(stay => stay.Stay.High >= longest).Select(stay => stay.Class).ToArray();
+        var last = tied.Where(group => tied.All(other => chain.Structure().CanReach(other.States[0], group.States[0]))).ToArray();
+        return last.Length == 1
+            ? last[0]
+            : throw new ChainStructureException(Messages.SeveralSlowestClasses(tied[0].States[0], tied[1].States[0]), [tied[0].States[0], tied[1].States[0]]);
     }
 
     /// <summary>Bounds of 1 / (1 − λ) for one class by itself, with room for rounding.</summary>
@@ -70,7 +80,7 @@ internal static class QuasiStationarySolve<TState>
         var start = new double[group.Members.Length];
         start.AsSpan().Fill(1);
         var (shares, _, _) = Iterate(system, start, options);
-        var (low, high, _) = Enclose(system, shares);
+        var (low, high, _, _) = Enclose(system, shares);
         var room = Tolerance(start.Length);
         return (low * (1 - room), high * (1 + room));
     }
@@ -95,26 +105,29 @@ internal static class QuasiStationarySolve<TState>
             system.IterateLeft(next);
             var (low, high) = Ratios(current, next);
             var width = (high - low) / low;
-            Normalize(next);
-            current = next;
             stalled = width < best ? 0 : stalled + 1;
             best = Math.Min(best, width);
             if (width <= UnitRoundoff || (best <= Tolerance(start.Length) && stalled >= MostWithoutProgress))
             {
-                return (current, iteration, true);
+                Normalize(next);
+                return (next, iteration, true);
             }
+
+            current = system.Step(next);
+            Normalize(current);
         }
 
         return (current, MostIterations, best <= Tolerance(start.Length));
     }
 
     /// <summary>One more solve, as careful as the options ask for; its ratios enclose 1 / (1 − λ).</summary>
-    private static (double Low, double High, double[] Next) Enclose(ExitSystem<TState> system, double[] shares)
+    private static (double Low, double High, double[] Next, double Error) Enclose(ExitSystem<TState> system, double[] shares)
     {
-        var next = Array.ConvertAll(system.SolveLeft(Array.ConvertAll(shares, share => (ScaledDoubleDouble)share)).Values, value => value.ToDouble());
+        var solution = system.SolveLeft(Array.ConvertAll(shares, share => (ScaledDoubleDouble)share));
+        var next = Array.ConvertAll(solution.Values, value => value.ToDouble());
         var (low, high) = Ratios(shares, next);
         Normalize(next);
-        return (low, high, next);
+        return (low, high, next, solution.RelativeErrorBound);
     }
 
     private static (double Low, double High) Ratios(double[] before, double[] after)
@@ -139,9 +152,8 @@ internal static class QuasiStationarySolve<TState>
         }
     }
 
-    private static double DecayBound(ExitSystem<TState> system, double low, double high, SolveOptions options)
+    private static double DecayBound(double error, double low, double high, SolveOptions options)
     {
-        var error = system.LeftError;
         return options.CertificateLevel == CertificateLevel.Proof && error < 0.25
             ? (((high - low) / low) + (2 * error) + (8 * UnitRoundoff)) * SubtractionFreeBound.SecondOrder
             : double.PositiveInfinity;

@@ -1,3 +1,5 @@
+using Stochastic.Chains.Kernels;
+
 namespace Stochastic.Chains.Stationary;
 
 /// <summary>
@@ -9,6 +11,9 @@ internal static class StationaryIteration
 {
     private const int Window = 16;
     private const double Rounding = 4.4408920985006262e-16;
+
+    /// <summary>A residual that is nothing but rounding: changes that no longer shrink are then rounding too.</summary>
+    private const double RoundingOfResidual = 4 * Rounding;
 
     internal static StationaryVector Run(StationaryProblem problem, double tolerance, int maxIterations, string reason, Action<double[]> sweep)
     {
@@ -25,7 +30,9 @@ internal static class StationaryIteration
             Normalize(current);
             var change = LargestRelativeChange(previous, current);
             report?.Invoke((double)made / maxIterations);
-            if (IsSettled(changes, change, tolerance) && Residual(problem, current) <= Math.Max(tolerance, Rounding))
+            var isSettled = IsSettled(changes, change, tolerance);
+            var hasStalled = !isSettled && change <= tolerance && changes.Count == Window && change >= changes.Peek();
+            if ((isSettled || hasStalled) && Residual(problem, current) <= (hasStalled ? RoundingOfResidual : Math.Max(tolerance, Rounding)))
             {
                 return new StationaryVector(current) { HasConverged = true, Reason = reason, Iterations = made };
             }
@@ -85,7 +92,7 @@ internal static class StationaryIteration
 
     private static void Normalize(double[] values)
     {
-        var sum = values.Sum();
+        var sum = CompensatedSum.Of(values);
         for (var k = 0; k < values.Length; k++)
         {
             values[k] /= sum;

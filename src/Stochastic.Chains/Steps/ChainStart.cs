@@ -30,7 +30,8 @@ public sealed class ChainStart<TState>
     /// <summary>Finds where things stand after a number of steps.</summary>
     /// <param name="steps">The number of steps, 0 or more.</param>
     /// <returns>The distribution with its certificate.</returns>
-    /// <exception cref="ArgumentOutOfRangeException">The number of steps is negative.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The number of steps is negative, or more than 2³⁰ of them change something each.</exception>
+    /// <exception cref="InvalidOperationException">The chain was made from rates; ask <see cref="AfterTime(double)"/>.</exception>
     /// <remarks>
     /// One multiplication of the distribution with the chain for each step: O(transitions) a step, and no power of the matrix is
     /// formed. Stops early, with the same answer, when a step changes nothing any more.

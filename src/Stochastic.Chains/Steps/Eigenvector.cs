@@ -1,5 +1,7 @@
 using System.Diagnostics.CodeAnalysis;
+using System.Globalization;
 using System.Numerics;
+using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains;
 
@@ -10,6 +12,8 @@ namespace Stochastic.Chains;
 public sealed class Eigenvector<TState>
     where TState : notnull
 {
+    private const int LargestTable = 24;
+
     private readonly Complex[] _values;
 
     internal Eigenvector(StateSpace<TState> states, Complex eigenvalue, Complex[] values)
@@ -33,4 +37,17 @@ public sealed class Eigenvector<TState>
     /// <exception cref="UnknownStateException">The label is none of the states.</exception>
     [SuppressMessage("Design", "CA1043", Justification = "States are the keys.")]
     public Complex this[TState state] => _values[States.Require(state)];
+
+    /// <summary>A small table of the entries, the same in every culture.</summary>
+    public override string ToString()
+    {
+        var table = new TextTable(["state", "entry"]);
+        foreach (var state in States.Take(LargestTable))
+        {
+            table.AddRow([Text.Label(state), this[state].ToString("G5", CultureInfo.InvariantCulture)]);
+        }
+
+        var rest = States.Count - LargestTable;
+        return rest > 0 ? $"{table}{Environment.NewLine}… and {Text.Count(rest)} more states" : table.ToString();
+    }
 }

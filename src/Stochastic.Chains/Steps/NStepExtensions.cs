@@ -69,6 +69,8 @@ public static class NStepExtensions
     {
         ArgumentNullException.ThrowIfNull(chain);
         ArgumentNullException.ThrowIfNull(options);
+        chain.RequireCountedSteps();
+        options.CancellationToken.ThrowIfCancellationRequested();
         if (steps < 0)
         {
             throw new ArgumentOutOfRangeException(nameof(steps), steps, Messages.NegativeSteps(steps));

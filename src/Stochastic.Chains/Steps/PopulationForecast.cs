@@ -14,7 +14,7 @@ namespace Stochastic.Chains;
 /// <code>
 /// PopulationForecast&lt;string&gt; quarter = pool.StartingWith(("clean", 1200), ("dirty", 310)).Forecast(13);
 /// double clean = quarter.Expected(4, "clean");
-/// long surelyClean = quarter.Count(4, "clean").Quantile(0.05);
+/// long surelyClean = quarter.Count("clean", 4).Quantile(0.05);
 /// </code>
 /// </example>
 [DebuggerDisplay("{ToString(),nq}")]
@@ -48,11 +48,11 @@ public sealed class PopulationForecast<TState> : ICertified
     public Certificate Certificate { get; }
 
     /// <summary>Gets how many items to expect in a state at a step.</summary>
-    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <param name="state">One of the states.</param>
+    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <exception cref="ArgumentOutOfRangeException">The step is outside the forecast.</exception>
     /// <exception cref="UnknownStateException">The label is none of the states.</exception>
-    public double Expected(int step, TState state) => _expected[(Checked(step) * States.Count) + States.Require(state)];
+    public double Expected(TState state, int step) => _expected[(Checked(step) * States.Count) + States.Require(state)];
 
     /// <summary>Lists how many items to expect in one state, step by step from 0 to the horizon.</summary>
     /// <param name="state">One of the states.</param>
@@ -69,16 +69,16 @@ public sealed class PopulationForecast<TState> : ICertified
     public double Losses(int step) => _losses[Checked(step)];
 
     /// <summary>Finds the standard deviation of the number in a state at a step, when items move independently.</summary>
-    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <param name="state">One of the states.</param>
+    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <exception cref="ArgumentOutOfRangeException">The step is outside the forecast.</exception>
     /// <exception cref="UnknownStateException">The label is none of the states.</exception>
     /// <remarks>One pass backwards over the steps: O(transitions) a step.</remarks>
-    public double StandardDeviation(int step, TState state) => Math.Sqrt(PopulationCount.Variance(Groups(step, state, CancellationToken.None)));
+    public double StandardDeviation(TState state, int step) => Math.Sqrt(PopulationCount.Variance(Groups(step, state, CancellationToken.None)));
 
     /// <summary>Finds the probabilities of the number in a state at a step, when items move independently.</summary>
-    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <param name="state">One of the states.</param>
+    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <exception cref="ArgumentOutOfRangeException">The step is outside the forecast.</exception>
     /// <exception cref="InvalidOperationException">More than ten million items can be in the state.</exception>
     /// <exception cref="UnknownStateException">The label is none of the states.</exception>
@@ -86,18 +86,18 @@ public sealed class PopulationForecast<TState> : ICertified
     /// A sum of independent yes-or-no items, in groups of equal probability: a convolution of binomial laws, without any approximation by a normal
     /// law. One pass backwards over the steps, then about the product of the widths of the laws, each about 20 standard deviations wide.
     /// </remarks>
-    /// <example><code>double tooFew = quarter.Count(4, "clean").AtMost(399);</code></example>
-    public CountDistribution Count(int step, TState state) => Count(step, state, new SolveOptions());
+    /// <example><code>double tooFew = quarter.Count("clean", 4).AtMost(399);</code></example>
+    public CountDistribution Count(TState state, int step) => Count(state, step, new SolveOptions());
 
     /// <summary>Finds the probabilities of the number in a state at a step, when items move independently, with options.</summary>
-    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <param name="state">One of the states.</param>
+    /// <param name="step">A step from 0 to <see cref="Horizon"/>.</param>
     /// <param name="options">Evidence and cancellation.</param>
     /// <exception cref="ArgumentOutOfRangeException">The step is outside the forecast.</exception>
     /// <exception cref="InvalidOperationException">More than ten million items can be in the state.</exception>
     /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
     /// <exception cref="UnknownStateException">The label is none of the states.</exception>
-    public CountDistribution Count(int step, TState state, SolveOptions options)
+    public CountDistribution Count(TState state, int step, SolveOptions options)
     {
         ArgumentNullException.ThrowIfNull(options);
         return PopulationCount.Of(Groups(step, state, options.CancellationToken), options);

@@ -8,15 +8,24 @@ internal static class Propagation<TState>
 {
     private const int StepsBetweenReports = 1 << 10;
 
+    /// <summary>The steps made one by one before the question is given back.</summary>
+    private const long MostSteps = 1L << 30;
+
     /// <summary>Where things stand after a number of steps of one chain.</summary>
     internal static StepDistribution<TState> Run(ChainStart<TState> start, long steps, SolveOptions options)
     {
-        var matrix = StepPath<TState>.MatrixOf(start.Chain);
+        start.Chain.RequireCountedSteps();
+        var matrix = StepMatrix.Of(start.Chain);
         var report = options.Report("steps");
         var path = new StepPath<TState>(start.Distribution);
         while (path.Steps < steps)
         {
             options.CancellationToken.ThrowIfCancellationRequested();
+            if (path.Made == MostSteps)
+            {
+                throw new ArgumentOutOfRangeException(nameof(steps), steps, Messages.TooManySteps(steps, MostSteps));
+            }
+
             path.Advance(matrix, path.IsSettledUnder(matrix) ? steps - path.Steps : 1);
             if (path.Steps % StepsBetweenReports == 0)
             {
@@ -35,7 +44,7 @@ internal static class Propagation<TState>
         foreach (var chain in Checked(start.States, chains))
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+            path.Advance(StepMatrix.Of(chain), 1);
             yield return path.ToDistribution(options);
         }
     }
@@ -47,7 +56,7 @@ internal static class Propagation<TState>
         foreach (var chain in Checked(start.States, chains))
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+            path.Advance(StepMatrix.Of(chain), 1);
         }
 
         return path.ToDistribution(options);
@@ -75,6 +84,7 @@ internal static class Propagation<TState>
                 throw new ArgumentException(Messages.NoChainForPeriod(period), nameof(chains));
             }
 
+            chain.RequireCountedSteps();
             yield return chain.States.Matches(states) ? chain : throw new ArgumentException(Difference(states, chain.States, period), nameof(chains));
         }
     }

@@ -12,7 +12,8 @@ namespace Stochastic.Chains;
 /// <remarks>
 /// The residual of its certificate is the largest entry of |P V − V Λ|, re-computed, each right vector having a largest entry of one; its
 /// absolute bound holds for eigenvalues: each one of the chain is that close to one of these. Powers made from it have certificates of their own.
-/// Immutable and safe for concurrent use.
+/// Of a chain made from rates it is the matrix of the steps that the rates were turned into: an eigenvalue λ stands for the rate (λ − 1) times
+/// <see cref="Chain{TState}.UniformizationRate"/>, and powers are refused. Immutable and safe for concurrent use.
 /// </remarks>
 /// <example>
 /// <code>
@@ -42,8 +43,8 @@ public sealed class SpectralDecomposition<TState> : ICertified
         _step = step;
         _factors = factors;
         _bound = bound;
-        _options = options;
-        _sharing = new WorkSharing(options.Parallelism, options.CancellationToken);
+        _options = options with { CancellationToken = CancellationToken.None, Progress = null }; // what is asked later is not cancelled with what was asked first
+        _sharing = new WorkSharing(options.Parallelism, CancellationToken.None);
         Certificate = certificate;
         HasOrthogonalVectors = isSymmetric;
         Eigenvalues = Array.AsReadOnly(factors.Eigenvalues);
@@ -103,8 +104,10 @@ public sealed class SpectralDecomposition<TState> : ICertified
         : _chain.Structure().RecurrentClasses.Sum(group => group.Period) > 1 ? 0
         : 1 - Complex.Abs(Eigenvalues[1]);
 
-    /// <summary>Gets the relaxation time in steps, one over the spectral gap; +∞ where the gap is 0.</summary>
-    public double RelaxationTime => 1 / SpectralGap;
+    /// <summary>
+    /// Gets the relaxation time, one over the spectral gap, in steps or in the unit of the rates when the chain was made from rates; +∞ where the gap is 0.
+    /// </summary>
+    public double RelaxationTime => 1 / (SpectralGap * (_chain.UniformizationRate ?? 1));
 
     /// <inheritdoc/>
     public Certificate Certificate { get; }
@@ -148,7 +151,7 @@ public sealed class SpectralDecomposition<TState> : ICertified
     {
         var shown = string.Join("; ", Eigenvalues.Take(MostShown).Select(Write));
         var rest = Eigenvalues.Count > MostShown ? $" and {Text.Count(Eigenvalues.Count - MostShown)} more" : string.Empty;
-        return $"{Text.Count(Eigenvalues.Count, "eigenvalue", "eigenvalues")}: {shown}{rest}; relaxation time {Text.Short(RelaxationTime)} steps";
+        return $"{Text.Count(Eigenvalues.Count, "eigenvalue", "eigenvalues")}: {shown}{rest}; relaxation time {Text.Short(RelaxationTime)}{(_chain.UniformizationRate is null ? " steps" : string.Empty)}";
     }
 
     /// <summary>A power of two steps or more.</summary>
@@ -159,8 +162,9 @@ public sealed class SpectralDecomposition<TState> : ICertified
         return new NStepMatrix<TState>(States, values, steps, Certify(values, steps, possible, reason));
     }
 
-    private static void RequireSteps(long steps)
+    private void RequireSteps(long steps)
     {
+        _chain.RequireCountedSteps();
         if (steps < 0)
         {
             throw new ArgumentOutOfRangeException(nameof(steps), steps, Messages.NegativeSteps(steps));

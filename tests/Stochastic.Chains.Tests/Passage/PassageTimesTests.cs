@@ -97,6 +97,51 @@ public class PassageTimesTests
     }
 
     [Fact]
+    public void A_continued_distribution_that_leaves_the_range_of_doubles_claims_no_relative_bound()
+    {
+        var often = Chain.Build<string>(rows => rows.Row("a", ("a", 0.7), ("b", 0.3)).Row("b", ("b", 1))).TimeTo("b").Distribution("a", 5000);
+        var hardlyEver = Chain.Build<string>(rows => rows.Row("a", ("a", 1e-12), ("b", 1)).Row("b", ("b", 1))).TimeTo("b").Distribution("a", 30);
+
+        often.Certificate.RelativeErrorBound.Should().Be(double.PositiveInfinity);
+        often.Certificate.AbsoluteErrorBound.Should().BeLessThan(Tolerances.Published);
+        often.SurvivalProbability(100).Should().BeApproximately(Math.Pow(0.7, 100), Math.Pow(0.7, 100) * Tolerances.Published);
+        hardlyEver.Certificate.RelativeErrorBound.Should().Be(double.PositiveInfinity);
+    }
+
+    [Theory]
+    [InlineData(0.3, 1e-16)]
+    [InlineData(0.003845731833408321, 3.403055606668204e-13)]
+    [InlineData(0.1, 1.1102230246251565e-16)]
+    public void Quantiles_close_to_one_count_those_still_on_the_way(double move, double rest)
+    {
+        var chain = Chain.Build<string>(rows => rows.Row("a", ("a", 1 - move), ("b", move)).Row("b", ("b", 1)));
+        var exact = Math.Ceiling(Math.Log(1 - (1 - rest)) / Math.Log(1 - move));
+
+        chain.TimeTo("b").Quantile("a", 1 - rest).Should().BeInRange(exact, exact + 1);
+    }
+
+    [Fact]
+    public void A_probability_that_is_only_approached_is_never_reached()
+    {
+        var chain = Chain.Build<string>(rows => rows.Row("a", ("a", 0.5), ("b", 0.25), ("c", 0.25)).Row("b", ("b", 1)).Row("c", ("c", 1)));
+        var soon = Chain.Build<string>(rows => rows.Row("a", ("b", 0.25), ("c", 0.75)).Row("b", ("b", 1)).Row("c", ("c", 1)));
+
+        chain.TimeTo("b").Quantile("a", 0.5).Should().Be(double.PositiveInfinity);
+        chain.TimeTo("b").Quantile("a", 0.499).Should().Be(9);
+        soon.TimeTo("b").Quantile("a", 0.25).Should().Be(1);
+    }
+
+    [Fact]
+    public void A_far_horizon_is_refused_by_its_memory_and_can_be_cancelled()
+    {
+        var times = Line(0.3).TimeTo(3);
+
+        times.Invoking(it => it.Distribution(0, 100_000_000, new SolveOptions { MemoryLimit = 1_000_000 })).Should().Throw<MemoryLimitException>();
+        Line(0.3).FirstPassageDistribution(0, 3, 40).Values.ToArray().Should().Equal(times.Distribution(0, 40).Values.ToArray());
+        Line(0.3).Invoking(it => it.FirstPassageDistribution(0, 3, -1)).Should().Throw<ArgumentOutOfRangeException>();
+    }
+
+    [Fact]
     public void A_target_that_may_be_missed_has_no_quantile_beyond_its_probability()
     {
         var chain = Chain.Build<string>(rows => rows.Row("a", ("b", 0.25), ("c", 0.75)).Row("b", ("b", 1)).Row("c", ("c", 1)));

@@ -85,6 +85,37 @@ public class QuasiStationaryTests
     }
 
     [Fact]
+    public void Of_classes_that_are_left_equally_slowly_the_last_one_counts()
+    {
+        var line = Chain.Build<string>(rows => rows.Row("a", ("a", 0.5), ("b", 0.5)).Row("b", ("b", 0.5), ("z", 0.5)).Row("z", ("z", 1)));
+
+        line.QuasiStationary()["b"].Should().Be(1);
+        line.QuasiStationary().DecayRate.Should().BeApproximately(0.5, Tolerances.SubtractionFree(2));
+    }
+
+    [Fact]
+    public void Where_nearly_all_leave_at_once_the_shares_are_found_too()
+    {
+        // λ of [0.01 0.002; 0.003 0.005] by its quadratic.
+        var chain = Chain.Build<string>(rows => rows
+            .Row("a", ("a", 0.01), ("b", 0.002), ("z", 0.988)).Row("b", ("a", 0.003), ("b", 0.005), ("z", 0.992)).Row("z", ("z", 1)));
+        var root = 0.0075 + Math.Sqrt((0.0025 * 0.0025) + (0.002 * 0.003));
+
+        var standing = chain.QuasiStationary();
+
+        standing.DecayRate.Should().BeApproximately(1 - root, Tolerances.SubtractionFree(3));
+        standing.Certificate.Iterations.Should().BeLessThan(200);
+    }
+
+    [Fact]
+    public void Where_nothing_stays_there_is_nothing_to_stand_like()
+    {
+        var line = Chain.Build<string>(rows => rows.Row("a", ("b", 1)).Row("b", ("c", 1)).Row("c", ("c", 1)));
+
+        line.Invoking(it => it.QuasiStationary()).Should().Throw<ChainStructureException>().WithMessage("*all left for good after a few steps*");
+    }
+
+    [Fact]
     public void Questions_without_one_answer_are_refused()
     {
         var closed = Chain.Build<string>(rows => rows.Row("a", ("b", 1)).Row("b", ("a", 1)));

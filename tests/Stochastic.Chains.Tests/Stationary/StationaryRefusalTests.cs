@@ -195,4 +195,20 @@ public class StationaryRefusalTests
             return new StationaryVector(values) { HasConverged = true, Reason = "Given." };
         }
     }
+
+    [Theory]
+    [InlineData(101)]
+    [InlineData(1001)]
+    public void Iterations_that_can_only_repeat_their_rounding_have_settled(int states)
+    {
+        var ring = Chain.FromTransitions(Enumerable.Range(0, states).SelectMany(state => new[]
+        {
+            new Transition<int>(state, state, 0.5), new Transition<int>(state, (state + 1) % states, 0.25), new Transition<int>(state, (state + states - 1) % states, 0.25),
+        }));
+
+        foreach (var method in new IStationaryMethod[] { new PowerMethod(), new GaussSeidelMethod(), new AggregationMethod() })
+        {
+            ring.Stationary(method)[0].Should().BeApproximately(1.0 / states, Tolerances.Published / states, method.Name);
+        }
+    }
 }

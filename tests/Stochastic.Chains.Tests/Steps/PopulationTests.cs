@@ -24,8 +24,8 @@ public class PopulationTests
             foreach (var state in Pool.States)
             {
                 var expected = (100 * clean[state]) + (60 * away[state]);
-                forecast.Expected(step, state).Should().BeApproximately(expected, 160 * Tolerances.Steps(step + 1, 3));
-                forecast.Of(state)[step].Should().Be(forecast.Expected(step, state));
+                forecast.Expected(state, step).Should().BeApproximately(expected, 160 * Tolerances.Steps(step + 1, 3));
+                forecast.Of(state)[step].Should().Be(forecast.Expected(state, step));
             }
         }
     }
@@ -36,11 +36,11 @@ public class PopulationTests
         // By hand. Step 1: 100 clean lose half, 50 move: 12.5 stay, 37.5 go out; 8 join clean, and in step 1 another 4 join out.
         var forecast = Pool.StartingWith(("clean", 100)).WithLosses(("clean", 0.5)).WithRecruitment(("clean", 8)).WithRecruitmentIn(1, ("out", 4)).Forecast(2);
 
-        forecast.Expected(1, "clean").Should().Be(20.5);
-        forecast.Expected(1, "out").Should().Be(41.5);
+        forecast.Expected("clean", 1).Should().Be(20.5);
+        forecast.Expected("out", 1).Should().Be(41.5);
         forecast.Losses(1).Should().Be(50);
-        forecast.Expected(2, "clean").Should().Be((20.5 * 0.5 * 0.25) + (41.5 * 0.375) + 8);
-        forecast.Expected(2, "lost").Should().Be(41.5 * 0.125);
+        forecast.Expected("clean", 2).Should().Be((20.5 * 0.5 * 0.25) + (41.5 * 0.375) + 8);
+        forecast.Expected("lost", 2).Should().Be(41.5 * 0.125);
         forecast.Losses(2).Should().Be(50 + 10.25);
         forecast.Losses(0).Should().Be(0);
         forecast.Certificate.Residual.Should().BeLessThan(Tolerances.Published);
@@ -73,7 +73,7 @@ public class PopulationTests
         var forecast = Pool.StartingWith(("clean", 3), ("out", 2)).WithRecruitment(("out", 1)).WithLosses(("out", 0.25)).Forecast(4);
         foreach (var state in Pool.States)
         {
-            var count = forecast.Count(4, state);
+            var count = forecast.Count(state, 4);
             var exact = ExactLaw(state);
 
             for (var k = 0; k < exact.Length; k++)
@@ -84,9 +84,9 @@ public class PopulationTests
             var mean = Rational.Sum(exact.Select((probability, k) => k * probability));
             var square = Rational.Sum(exact.Select((probability, k) => (long)k * k * probability));
             count.Mean.Should().BeApproximately(mean.ToDouble(), Tolerances.Published);
-            count.Mean.Should().BeApproximately(forecast.Expected(4, state), Tolerances.Published);
+            count.Mean.Should().BeApproximately(forecast.Expected(state, 4), Tolerances.Published);
             count.StandardDeviation.Should().BeApproximately(Math.Sqrt((square - (mean * mean)).ToDouble()), Tolerances.Published);
-            forecast.StandardDeviation(4, state).Should().Be(count.StandardDeviation);
+            forecast.StandardDeviation(state, 4).Should().Be(count.StandardDeviation);
             count.Certificate.Residual.Should().BeLessThan(Tolerances.Published);
         }
     }
@@ -95,7 +95,7 @@ public class PopulationTests
     public void A_large_number_has_the_binomial_law()
     {
         const int items = 100_000;
-        var count = Pool.StartingWith(("clean", items)).Forecast(3).Count(3, "out");
+        var count = Pool.StartingWith(("clean", items)).Forecast(3).Count("out", 3);
         var probability = Pool.StartingIn("clean").After(3)["out"];
         var binomial = new MathNet.Numerics.Distributions.Binomial(probability, items);
         var deviation = Math.Sqrt(items * probability * (1 - probability));
@@ -115,7 +115,7 @@ public class PopulationTests
     public void Ten_million_items_keep_their_digits()
     {
         // P(X <= 5,390,625) for ten million trials of probability 69/128, summed with 50 digits by mpmath 1.3.0: 0.50012324799316600122...
-        var count = Pool.StartingWith(("clean", 10_000_000)).Forecast(3).Count(3, "out");
+        var count = Pool.StartingWith(("clean", 10_000_000)).Forecast(3).Count("out", 3);
 
         count.AtMost(5_390_625).Should().BeApproximately(0.50012324799316600, Tolerances.Published);
         Math.Abs(count.AtMost(5_390_625) - 0.50012324799316600).Should().BeLessThanOrEqualTo(count.Certificate.AbsoluteErrorBound);
@@ -125,7 +125,7 @@ public class PopulationTests
     [Fact]
     public void Quantiles_and_cumulative_probabilities_agree_at_the_ends()
     {
-        var count = Pool.StartingWith(("clean", 40)).Forecast(2).Count(2, "clean");
+        var count = Pool.StartingWith(("clean", 40)).Forecast(2).Count("clean", 2);
 
         count.AtMost(-1).Should().Be(0);
         count.AtMost(40).Should().Be(1);
@@ -141,10 +141,10 @@ public class PopulationTests
     public void What_is_certain_has_no_scatter()
     {
         var empty = Pool.StartingWith().Forecast(2);
-        empty.Count(2, "clean").AtMost(0).Should().Be(1);
+        empty.Count("clean", 2).AtMost(0).Should().Be(1);
         empty.Certificate.Residual.Should().Be(0);
 
-        var lost = Pool.StartingWith(("lost", 5)).Forecast(2).Count(2, "lost");
+        var lost = Pool.StartingWith(("lost", 5)).Forecast(2).Count("lost", 2);
         lost.Probability(5).Should().Be(1);
         lost.StandardDeviation.Should().Be(0);
     }
@@ -156,8 +156,8 @@ public class PopulationTests
         var forecast = Pool.StartingWith(("clean", 16)).ForecastThrough([still, Pool, still]);
 
         forecast.Of("out").Should().Equal(0, 0, 12, 12);
-        forecast.Count(3, "out").Mean.Should().Be(12);
-        forecast.Count(1, "out").AtMost(0).Should().Be(1);
+        forecast.Count("out", 3).Mean.Should().Be(12);
+        forecast.Count("out", 1).AtMost(0).Should().Be(1);
         var other = Chain.FromMatrix(["clean", "out"], new[,] { { 0.5, 0.5 }, { 1.0, 0.0 } });
         Pool.StartingWith(("clean", 16)).Invoking(x => x.ForecastThrough([other])).Should().Throw<ArgumentException>().WithMessage("*'lost'*");
     }
@@ -187,10 +187,10 @@ public class PopulationTests
         population.Invoking(x => x.Forecast(-1)).Should().Throw<ArgumentOutOfRangeException>();
         population.Invoking(x => x.Forecast(1000, new SolveOptions { MemoryLimit = 1000 })).Should().Throw<MemoryLimitException>();
         population.Invoking(x => x.Forecast(9, new SolveOptions { CancellationToken = new CancellationToken(true) })).Should().Throw<OperationCanceledException>();
-        population.Forecast(2).Invoking(x => x.Expected(3, "clean")).Should().Throw<ArgumentOutOfRangeException>().WithMessage("*step 2*");
+        population.Forecast(2).Invoking(x => x.Expected("clean", 3)).Should().Throw<ArgumentOutOfRangeException>().WithMessage("*step 2*");
         population.Forecast(2).Invoking(x => x.Losses(-1)).Should().Throw<ArgumentOutOfRangeException>();
-        population.Forecast(2).Invoking(x => x.Count(1, "clean", new SolveOptions { CancellationToken = new CancellationToken(true) })).Should().Throw<OperationCanceledException>();
-        Pool.StartingWith(("clean", 20_000_000)).Forecast(2).Invoking(x => x.Count(2, "clean")).Should().Throw<InvalidOperationException>().WithMessage("*20,000,000*StandardDeviation*");
+        population.Forecast(2).Invoking(x => x.Count("clean", 1, new SolveOptions { CancellationToken = new CancellationToken(true) })).Should().Throw<OperationCanceledException>();
+        Pool.StartingWith(("clean", 20_000_000)).Forecast(2).Invoking(x => x.Count("clean", 2)).Should().Throw<InvalidOperationException>().WithMessage("*20,000,000*StandardDeviation*");
     }
 
     /// <summary>Each item is a factor (1 − p) + p·z; the coefficients of the product are the probabilities.</summary>

@@ -49,4 +49,19 @@ public class StepRefusalTests
         Pump.StartingIn("new").Invoking(start => start.After(5, new SolveOptions { CancellationToken = new CancellationToken(true) }))
             .Should().Throw<OperationCanceledException>();
     }
+
+    [Fact]
+    public void A_chain_made_from_rates_does_not_count_its_time_in_steps()
+    {
+        var plant = Chain.FromRates([new TransitionRate<string>("running", "failed", 1e-4), new TransitionRate<string>("failed", "running", 0.05)]);
+
+        plant.Invoking(it => it.StartingIn("running").After(10)).Should().Throw<InvalidOperationException>().WithMessage("*AfterTime(t)*");
+        plant.Invoking(it => it.StartingIn("running").Forecast(10)).Should().Throw<InvalidOperationException>();
+        plant.Invoking(it => it.StartingWith(("running", 10)).Forecast(10)).Should().Throw<InvalidOperationException>();
+        plant.Invoking(it => it.NStep(10)).Should().Throw<InvalidOperationException>();
+        plant.Invoking(it => it.Spectrum().NStep(10)).Should().Throw<InvalidOperationException>();
+
+        // The other eigenvalue of the generator is −(λ + μ).
+        plant.Spectrum().RelaxationTime.Should().BeApproximately(1 / 0.0501, Tolerances.Published / 0.0501);
+    }
 }
