@@ -62,6 +62,9 @@ checks.Holds("the certificate is a proof", shares.Certificate.IsProof);
 checks.Figure("share failed, linear system", pump.Stationary(new LinearSystemMethod())[Stage.Failed], 1.0 / 15);
 checks.Figure("share failed, polished", pump.Stationary(new PolishedMethod(new LinearSystemMethod())).Require(relativeError: 1e-15)[Stage.Failed], 1.0 / 15);
 checks.Figure("share failed, aggregation", pump.Stationary(new AggregationMethod())[Stage.Failed], 1.0 / 15);
+double wear = pump.StationaryDerivative(new(Stage.New, Stage.Worn, 1), new(Stage.New, Stage.New, -1))[Stage.Failed];
+checks.Figure("slope of the share failed", wear, 100.0 / 225); // the share is 1/(1/p + 5) at p = 1/10
+checks.Figure("group inverse", pump.GroupInverse()[Stage.New, Stage.New], 210.0 / 225);
 checks.Figure("weeks until failed", pump.TimeTo(Stage.Failed).Mean(Stage.New), 14);
 FirstPassageTable<Stage> passages = pump.MeanFirstPassage().Require(relativeError: 1e-12);
 checks.Figure("weeks between failures", passages[Stage.Failed, Stage.Failed], 15);
@@ -98,6 +101,14 @@ using var scans = new StringReader("""
 TransitionCounts<string> counts = EventLog.CountCsv(scans, columns);
 checks.Figure("moves counted", counts.TotalCount, 4);
 checks.Figure("probability from counts", counts.ToChain()["clean", "at shop"], 2.0 / 3);
+
+checks.Figure("standard error of a probability", counts.Estimate().StandardError("clean", "at shop"), Math.Sqrt(2.0 / 3 / 3 / 3));
+checks.Figure("a prior of one for each move", counts.Estimate(new EstimateOptions<string> { Prior = DirichletPrior.Uniform<string>() })["clean", "at shop"], 3.0 / 5);
+checks.Holds("few moves find nothing", !counts.TestIndependence().Rejects(0.05));
+AnswerConfidence confidence = counts.Confidence(chain => chain["clean", "at shop"]);
+checks.Holds("the interval holds the estimate", confidence.Interval.Contains(confidence.Estimate) && confidence.Draws == 1000);
+checks.Holds("by slope about as far", counts.TimeError("clean", "at shop", new EstimateOptions<string>()).StandardError > 0);
+checks.Holds("random numbers are fixed", new RandomNumbers(42, 7).NextBits() == 0xe55410cc67ee6f2c);
 
 bool isChain = Chain.TryFromMatrix(["a", "b"], new[,] { { 0.5, 0.6 }, { -1, 2 } }, out _, out IReadOnlyList<ChainFault> faults);
 checks.Holds("all faults are listed", !isChain && faults.Count >= 3);

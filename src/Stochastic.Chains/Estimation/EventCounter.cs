@@ -85,7 +85,7 @@ internal sealed class EventCounter<TItem, TState>
         var silence = LogStates.Silence(_options, _states);
         var end = _options.LogEnd ?? _last;
         var grid = _options.Period is { } period && !_faults.HasFaults ? new PeriodGrid(period, _first.UtcTicks, end.UtcTicks) : null;
-        var moves = new MoveCounter();
+        var moves = new MoveCounter(_options.KeepsHistory ? new PathRecorder() : null);
         var tally = new LogTally(_states.Count);
         var histories = new HistoryCounter(grid, silence, end.UtcTicks, moves, tally);
         for (var item = 0; item < _scans.ItemCount; item++)
@@ -103,7 +103,7 @@ internal sealed class EventCounter<TItem, TState>
         _options.Progress?.Report(new SolveProgress("counting moves", 1));
         var states = _states.ToStateSpace();
         var rows = moves.ToRows(states.Count);
-        return new TransitionCounts<TState>(states, rows, _scans.ItemCount, Report(states, rows, tally, end));
+        return new TransitionCounts<TState>(states, rows, _scans.ItemCount, Report(states, rows, tally, end)) { History = PathHistories.Of(states, moves) };
     }
 
     private void AddScan(in LogEvent<TItem, TState> entry, long number)

@@ -6,6 +6,7 @@ internal sealed class HistoryCounter(PeriodGrid? periods, Silence silence, long 
     /// <summary>Counts one item: its events by time, no two at one instant, at least one.</summary>
     internal void Count(ReadOnlySpan<Scan> history)
     {
+        moves.StartPath();
         if (history.Length == 1)
         {
             tally.SingleEventItems++;

@@ -62,6 +62,12 @@ public sealed record LogOptions<TState>
     /// </summary>
     public DateTimeOffset? LogEnd { get; init; }
 
+    /// <summary>
+    /// Gets whether <see cref="TransitionCounts{TState}.History"/> is counted too, which the tests of a second order and of the lengths of stays need.
+    /// Takes memory for each three states seen in a row. Default: false.
+    /// </summary>
+    public bool KeepsHistory { get; init; }
+
     /// <summary>Gets where progress is reported, now and then; the fraction stays 0 while the number of events is unknown. Default: nowhere.</summary>
     public IProgress<SolveProgress>? Progress { get; init; }
 

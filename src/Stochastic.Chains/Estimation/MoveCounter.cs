@@ -3,18 +3,28 @@ using System.Runtime.InteropServices;
 namespace Stochastic.Chains.Estimation;
 
 /// <summary>Counts moves between states by position: a small table for the first states, a dictionary of packed pairs for the others.</summary>
-internal sealed class MoveCounter
+internal sealed class MoveCounter(PathRecorder? recorder)
 {
     private const int TableSize = 64;
 
     private readonly long[] _table = new long[TableSize * TableSize];
     private readonly Dictionary<long, long> _others = [];
 
+    internal MoveCounter()
+        : this(null)
+    {
+    }
+
+    internal PathRecorder? Recorder => recorder;
+
+    internal void StartPath() => recorder?.StartPath();
+
     internal void Add(int from, int to) => Add(from, to, 1);
 
     /// <exception cref="OverflowException">A count passes 2⁶³ − 1.</exception>
     internal void Add(int from, int to, long count)
     {
+        recorder?.Add(from, to, count);
         if ((from | to) < TableSize)
         {
             ref var cell = ref _table[(from * TableSize) + to];

@@ -3,10 +3,10 @@ using Stochastic.Chains.Internal;
 namespace Stochastic.Chains.Estimation;
 
 /// <summary>Counts the moves along paths, gathering every fault on the way. No move leads from one path to the next.</summary>
-internal sealed class PathCounter<TState>(StateLookup<TState> states)
+internal sealed class PathCounter<TState>(StateLookup<TState> states, bool keepsHistory)
     where TState : notnull
 {
-    private readonly MoveCounter _moves = new();
+    private readonly MoveCounter _moves = new(keepsHistory ? new PathRecorder() : null);
     private readonly FaultCollector _faults = new();
     private long _paths;
 
@@ -19,6 +19,7 @@ internal sealed class PathCounter<TState>(StateLookup<TState> states)
             return;
         }
 
+        _moves.StartPath();
         var previous = -1;
         var step = 0L;
         foreach (var state in path)
@@ -44,7 +45,7 @@ internal sealed class PathCounter<TState>(StateLookup<TState> states)
 
         _faults.ThrowIfAny();
         var space = states.ToStateSpace();
-        return new TransitionCounts<TState>(space, _moves.ToRows(space.Count), _paths, log: null);
+        return new TransitionCounts<TState>(space, _moves.ToRows(space.Count), _paths, log: null) { History = PathHistories.Of(space, _moves) };
     }
 
     private int Locate(TState state, long step)

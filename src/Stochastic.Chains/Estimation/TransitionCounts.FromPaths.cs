@@ -54,7 +54,7 @@ public static partial class TransitionCounts
     {
         ArgumentNullException.ThrowIfNull(paths);
         ArgumentNullException.ThrowIfNull(comparer);
-        return CountPaths(paths, StateLookup<TState>.FirstSeen(comparer));
+        return CountPaths(paths, StateLookup<TState>.FirstSeen(comparer), keepsHistory: false);
     }
 
     /// <summary>Counts the moves along many paths between given states.</summary>
@@ -70,13 +70,33 @@ public static partial class TransitionCounts
     {
         ArgumentNullException.ThrowIfNull(states);
         ArgumentNullException.ThrowIfNull(paths);
-        return CountPaths(paths, StateLookup<TState>.Listed(states));
+        return CountPaths(paths, StateLookup<TState>.Listed(states), keepsHistory: false);
     }
 
-    private static TransitionCounts<TState> CountPaths<TState>(IEnumerable<IEnumerable<TState>> paths, StateLookup<TState> states)
+    /// <summary>Counts the moves along many paths, with options.</summary>
+    /// <typeparam name="TState">The type of a state.</typeparam>
+    /// <param name="paths">For each item its states at successive steps; read once.</param>
+    /// <param name="options">The list of states, their equality, and whether the history is kept.</param>
+    /// <exception cref="InvalidChainException">The list or the paths have faults, such as a state outside the list; all are named.</exception>
+    /// <example><code>var counts = TransitionCounts.FromPaths(paths, new PathOptions&lt;string&gt; { KeepsHistory = true });</code></example>
+    public static TransitionCounts<TState> FromPaths<TState>(IEnumerable<IEnumerable<TState>> paths, PathOptions<TState> options)
         where TState : notnull
     {
-        var counter = new PathCounter<TState>(states);
+        ArgumentNullException.ThrowIfNull(paths);
+        ArgumentNullException.ThrowIfNull(options);
+        var states = options switch
+        {
+            { States: null } => StateLookup<TState>.FirstSeen(options.Comparer ?? EqualityComparer<TState>.Default),
+            { Comparer: null } => StateLookup<TState>.Listed(options.States),
+            _ => StateLookup<TState>.Listed(options.States, options.Comparer),
+        };
+        return CountPaths(paths, states, options.KeepsHistory);
+    }
+
+    private static TransitionCounts<TState> CountPaths<TState>(IEnumerable<IEnumerable<TState>> paths, StateLookup<TState> states, bool keepsHistory)
+        where TState : notnull
+    {
+        var counter = new PathCounter<TState>(states, keepsHistory);
         foreach (var path in paths)
         {
             counter.AddPath(path);

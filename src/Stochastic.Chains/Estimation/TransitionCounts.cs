@@ -48,6 +48,11 @@ public sealed class TransitionCounts<TState>
     /// <summary>Enumerates the moves that were counted at least once, row by row, in state order.</summary>
     public IEnumerable<TransitionCount<TState>> Moves => Enumerable.Range(0, States.Count).SelectMany(RowMoves);
 
+    /// <summary>
+    /// Gets what was counted beyond single moves: three states in a row and lengths of stays; null unless the options of counting asked for it.
+    /// </summary>
+    public PathHistory<TState>? History { get; internal init; }
+
     internal CountRows Rows { get; }
 
     /// <summary>Gets how often a move was counted; 0 for a move between these states that was not.</summary>
@@ -84,7 +89,7 @@ public sealed class TransitionCounts<TState>
         var counter = new MoveCounter();
         counter.AddAll(Rows);
         counter.AddAll(other.Rows);
-        return new TransitionCounts<TState>(States, counter.ToRows(States.Count), checked(PathCount + other.PathCount), log: null);
+        return new TransitionCounts<TState>(States, counter.ToRows(States.Count), checked(PathCount + other.PathCount), log: null) { History = PathHistories.Sum(History, other.History) };
     }
 
     /// <summary>Gets how many moves out of a state were counted: the total of its row.</summary>
@@ -138,7 +143,7 @@ public sealed class TransitionCounts<TState>
     /// <example><code>IReadOnlyList&lt;string&gt; leftOut = counts.FindDroppedStates();</code></example>
     public IReadOnlyList<TState> FindDroppedStates()
     {
-        var kept = MaximumLikelihood.FindKept(Rows);
+        var kept = KeptCounts.FindKept(Rows);
         return [.. States.Where((_, row) => !kept[row])];
     }
 

@@ -45,6 +45,9 @@ public enum ChainFaultKind
     /// <summary>A state was never left in the counts from which the chain is to be estimated.</summary>
     UnobservedRow,
 
+    /// <summary>A move was counted that the options of the estimate say is impossible.</summary>
+    ImpossibleMove,
+
     /// <summary>Stands last in a list of faults that was cut; its value is the number of faults not listed.</summary>
     Unlisted,
 }

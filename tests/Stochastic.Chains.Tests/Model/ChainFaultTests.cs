@@ -44,9 +44,9 @@ public class ChainFaultTests
     }
 
     [Fact]
-    public void Only_the_kind_that_belongs_to_counts_is_left_to_the_tests_of_estimation()
+    public void Only_the_kinds_that_belong_to_counts_are_left_to_the_tests_of_estimation()
     {
-        Enum.GetValues<ChainFaultKind>().Except(Provocations.Keys).Should().Equal(ChainFaultKind.UnobservedRow);
+        Enum.GetValues<ChainFaultKind>().Except(Provocations.Keys).Should().Equal(ChainFaultKind.UnobservedRow, ChainFaultKind.ImpossibleMove);
     }
 
     [Theory]

@@ -47,12 +47,39 @@ internal static class LibraryAnswers
             ["reliability"] = Reliability,
             ["embedded_step_matrix"] = query => query.Matrix().SelectMany((row, start) =>
                 row.Zip(query.Chain().ToChain().StartingIn(start).AfterTime(query.RationalArgument("step").ToDouble()).ToArray())),
+            ["group_inverse"] = query => query.Matrix().SelectMany(row => row).Zip(query.Chain().ToChain().GroupInverse().Values.ToArray()),
+            ["stationary_derivative"] = StationaryDerivative,
+            ["transition_estimate"] = CountAnswers.Probabilities,
+            ["pooled_estimate"] = CountAnswers.Probabilities,
+            ["standard_errors"] = CountAnswers.StandardErrors,
+            ["expected_counts"] = CountAnswers.ExpectedCounts,
+            ["chi2_independence"] = query => [(query.Scalar(), CountAnswers.Independence(query).ChiSquare.Value)],
+            ["chi2_independence_pvalue"] = query => [(query.Scalar(), CountAnswers.Independence(query).ChiSquare.PValue)],
+            ["chi2_four_cells"] = CountAnswers.LargeCells,
+            ["lr_order0_vs_order1"] = query => [(query.Scalar(), CountAnswers.Independence(query).LikelihoodRatio.Value)],
+            ["chi2_homogeneity"] = query => [(query.Scalar(), CountAnswers.Homogeneity(query).ChiSquare.Value)],
+            ["lr_homogeneity"] = query => [(query.Scalar(), CountAnswers.Homogeneity(query).LikelihoodRatio.Value)],
+            ["chi2_pvalue"] = query => [(query.Scalar(), CountAnswers.Homogeneity(query).ChiSquare.PValue)],
+            ["lr_pvalue"] = query => [(query.Scalar(), CountAnswers.GroupsOrOrder(query).LikelihoodRatio.PValue)],
+            ["log_likelihood"] = query => CountAnswers.Fits(query, fit => fit.LogLikelihood),
+            ["aic"] = query => CountAnswers.Fits(query, fit => fit.AkaikeCriterion),
+            ["bic"] = query => CountAnswers.Fits(query, fit => fit.BayesianCriterion),
             ["total_variation_worst"] = TotalVariationWorst,
             ["total_variation"] = query => query.Vector().Zip(query.States("n").Select(steps => Distance(query, steps))),
         };
 
     /// <summary>Kinds of questions whose answers are right to an absolute error, because they come of subtractions.</summary>
-    public static IReadOnlySet<string> Absolute { get; } = new HashSet<string> { "total_variation", "total_variation_worst", "eigenvalues", "second_eigenvalue" };
+    public static IReadOnlySet<string> Absolute { get; } = new HashSet<string> { "total_variation", "total_variation_worst", "eigenvalues", "second_eigenvalue", "stationary_derivative" };
+
+    private static IEnumerable<Pair> StationaryDerivative(PublishedQuery query)
+    {
+        var changes = query.HasArgument("direction_triplets")
+            ? query.Arguments.GetProperty("direction_triplets").EnumerateArray()
+                .Select(entry => new ProbabilityChange<int>(entry[0].GetInt32(), entry[1].GetInt32(), Rational.Parse(entry[2].GetString()!).ToDouble()))
+            : query.Arguments.GetProperty("direction").EnumerateArray().SelectMany((row, from) => row.EnumerateArray()
+                .Select((rate, to) => new ProbabilityChange<int>(from, to, rate.GetDouble())));
+        return query.Vector().Zip(query.Chain().ToChain().StationaryDerivative(changes).Values.ToArray());
+    }
 
     private static NStepMatrix<int> NStep(PublishedQuery query) => query.Chain().ToStepChain().NStep(query.IntegerArgument("n"));
 
