@@ -21,27 +21,38 @@ internal static class DepthConfig
     private const int QuickMilliseconds = 50;
     private const int FullMilliseconds = 250;
 
-    /// <summary>Watch one call from start to end instead of repeating it, which takes as long as it takes.</summary>
+    private const string States = "States";
+    private const int MostStatesPropagated = 100;
+
     private static readonly string[] NotQuick = ["CancellationBenchmarks", "LargeStationaryBenchmarks", "ManyPowersBenchmarks"];
 
     internal static IConfig For(Depth depth)
     {
+        var isQuick = depth == Depth.Quick;
         var job = Job.Default
             .WithToolchain(InProcessEmitToolchain.Instance)
-            .WithIterationTime(TimeInterval.FromMilliseconds(depth == Depth.Quick ? QuickMilliseconds : FullMilliseconds))
-            .WithWarmupCount(depth == Depth.Quick ? 2 : 4)
-            .WithIterationCount(depth == Depth.Quick ? 4 : 8);
-        var config = ManualConfig.CreateEmpty()
+            .WithIterationTime(TimeInterval.FromMilliseconds(isQuick ? QuickMilliseconds : FullMilliseconds))
+            .WithWarmupCount(isQuick ? 2 : 4)
+            .WithIterationCount(isQuick ? 4 : 8);
+        return ManualConfig.CreateEmpty()
             .AddJob(job)
             .AddColumnProvider(DefaultColumnProviders.Instance)
             .AddExporter(MarkdownExporter.GitHub)
             .AddLogger(ConsoleLogger.Default)
-            .WithOptions(ConfigOptions.JoinSummary);
-        return depth == Depth.Quick ? config.AddFilter(new SimpleFilter(IsQuick)) : config;
+            .AddFilter(new SimpleFilter(benchmark => IsBearable(benchmark) && (!isQuick || IsQuick(benchmark))));
     }
+
+    /// <summary>A thousand steps of each of many rows take minutes a call; a few rows show how it grows.</summary>
+    private static bool IsBearable(BenchmarkCase benchmark) =>
+        benchmark.Descriptor.WorkloadMethod.Name != "Propagation" || Number(benchmark, States) <= MostStatesPropagated;
 
     private static bool IsQuick(BenchmarkCase benchmark) =>
         !NotQuick.Contains(benchmark.Descriptor.Type.Name)
-        && benchmark.Parameters.Items.All(parameter => parameter.Value is not int number
-            || number <= (parameter.Name == "States" ? MostQuickStates : MostQuickItems));
+        && Number(benchmark, States) <= MostQuickStates
+        && Number(benchmark, "Transitions") <= MostQuickItems
+        && Number(benchmark, "Events") <= MostQuickItems;
+
+    /// <summary>A parameter; 0 where there is none of that name.</summary>
+    private static int Number(BenchmarkCase benchmark, string name) =>
+        benchmark.Parameters.Items.FirstOrDefault(parameter => parameter.Name == name)?.Value is int number ? number : 0;
 }

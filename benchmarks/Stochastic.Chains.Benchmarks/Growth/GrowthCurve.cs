@@ -15,7 +15,7 @@ internal sealed record GrowthCurve(
     private const int MovesPerState = 10;
 
     private static readonly int[] Dense = [64, 128, 256, 512, 1024, 2048];
-    private static readonly int[] Sparse = [20_000, 100_000, 500_000, 2_500_000];
+    private static readonly int[] Sparse = [20_000, 100_000, 500_000, 2_000_000];
 
     internal static IReadOnlyList<GrowthCurve> All { get; } =
     [
@@ -25,19 +25,19 @@ internal sealed record GrowthCurve(
         OfChain("Mean times to one state", 3, chain => () => chain.TimeTo(0, Ratios.Comparisons.WithoutEvidence)),
         OfChain("Mean first passage times, all pairs", 3, chain => () => chain.MeanFirstPassage(Ratios.Comparisons.WithoutEvidence)),
         OfChain("Matrix of 1000 steps", 3, chain => () => chain.NStep(1000, new SquaringMethod(), Ratios.Comparisons.WithoutEvidence)),
-        OfMoves("Making a chain from moves", moves => () => Chain.FromTransitions(moves)),
-        OfMoves("Distribution after 10 steps", moves =>
+        OfMoves("Making a chain from moves", InventedChains.AllNear, moves => () => Chain.FromTransitions(moves)),
+        OfMoves("Distribution after 10 steps", InventedChains.AllNear, moves =>
         {
             var chain = Chain.FromTransitions(moves);
             var start = chain.StartingIn(Distribution.Uniform(chain.States));
             return () => start.After(10, Ratios.Comparisons.WithoutEvidence);
         }),
-        OfMoves("Classes and periods", moves =>
+        OfMoves("Classes and periods", InventedChains.AllNear, moves =>
         {
             var chain = Chain.FromTransitions(moves);
             return () => new Chain<int>(chain.States, chain.Matrix, [], null).Structure();
         }),
-        OfMoves("Long-run shares by aggregation", moves =>
+        OfMoves("Long-run shares by aggregation", InventedChains.HalfNear, moves =>
         {
             var chain = Chain.FromTransitions(moves);
             chain.Structure();
@@ -51,6 +51,6 @@ internal sealed record GrowthCurve(
     private static GrowthCurve OfChain(string question, double order, Func<Chain<int>, Action> prepare) =>
         new(question, States, order, 2, Dense, size => prepare(Chain.FromMatrix(InventedMatrices.Dense(size))));
 
-    private static GrowthCurve OfMoves(string question, Func<Transition<int>[], Action> prepare) =>
-        new(question, Transitions, 1, 1, Sparse, size => prepare(InventedChains.AllNear(size / MovesPerState)));
+    private static GrowthCurve OfMoves(string question, Func<int, Transition<int>[]> make, Func<Transition<int>[], Action> prepare) =>
+        new(question, Transitions, 1, 1, Sparse, size => prepare(make(size / MovesPerState)));
 }
