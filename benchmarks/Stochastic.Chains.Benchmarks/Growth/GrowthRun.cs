@@ -31,6 +31,7 @@ internal static class GrowthRun
     {
         var first = AllocatedInFreshProcess(number, size);
         var call = curve.Prepare(size);
+        call();
         var seconds = AlternatingTimer.Least([new Contender(curve.Question, runs => AlternatingTimer.LeastOf(runs, call))], SecondsEach)[0];
         var later = Allocated(call);
         Console.WriteLine(string.Create(

@@ -11,17 +11,16 @@ internal static class AlternatingTimer
     private const double SecondsPerTurn = 0.02;
     private const double WarmUpSeconds = 0.25;
     private const int MostRunsPerTurn = 200;
-    private const int LeastRounds = 3;
 
     /// <summary>The least seconds of each contender.</summary>
     /// <param name="contenders">Those to be timed.</param>
-    /// <param name="seconds">What each may take; one whose single run takes longer is run once more and no more.</param>
+    /// <param name="seconds">What each may take; one whose single run takes longer is not run again.</param>
     internal static double[] Least(IReadOnlyList<Contender> contenders, double seconds)
     {
         double[] least = [.. contenders.Select(contender => WarmUp(contender, seconds))];
         int[] runs = [.. least.Select(first => (int)Math.Clamp(SecondsPerTurn / first, 1, MostRunsPerTurn))];
-        var spent = new double[contenders.Count];
-        for (var round = 0; round < LeastRounds || spent.Any(own => own < seconds); round++)
+        double[] spent = [.. least.Select(first => first < seconds ? 0 : seconds)];
+        while (spent.Any(own => own < seconds))
         {
             for (var k = 0; k < contenders.Count; k++)
             {
