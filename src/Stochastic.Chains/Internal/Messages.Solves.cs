@@ -52,6 +52,29 @@ internal static partial class Messages
 
     internal const string SlowQuasiStationary = "Two parts of the transient states are left almost equally slowly. Ask StartingIn(…).After(n) for a given start.";
 
+    internal const string NothingLeft = "All states are left out. Keep at least one.";
+
+    internal const string ChangeTheRates = "The chain was made from rates. Change the rates and make it again with Chain.FromRates.";
+
+    internal const string NotReversed =
+        "Some states cannot be reached from some others, so the chain has no moves backwards from where it never is. Ask Without(…) or Censor(…) for the chain of one class first.";
+
+    internal static string OnlyMovesOut(object state) =>
+        $"{Text.Quoted(state)} can only move into states that are left out. Leave it out too, or give it another row with With(…) first.";
+
+    internal static string MayNeverReturn(object state) =>
+        $"The chain may enter {Text.Quoted(state)} and never come back to the states that are looked at. Look at it too.";
+
+    internal static string ShiftToItself(object state) => $"Both moves lead to {Text.Quoted(state)}. Name two different states.";
+
+    internal static string ShiftTooMuch(object from, object takenFrom, double amount, double available) =>
+        $"{Text.Number(amount)} cannot be taken from the move {Text.Quoted(from)} to {Text.Quoted(takenFrom)}, whose probability is {Text.Number(available)}. " +
+        "Give an amount above 0 that is not larger.";
+
+    internal static string NotLumpable(object one, double high, object other, double low, object group, object into) =>
+        $"{Text.Quoted(one)} and {Text.Quoted(other)} are both in the group {Text.Quoted(group)}, but move into the group {Text.Quoted(into)} with the probabilities " +
+        $"{Text.Number(high)} and {Text.Number(low)}. Separate them, or ask CoarsestLumping(…) for groups that can be taken together.";
+
     internal const string NoTargets = "No target states are given. Name at least one.";
 
     internal static string TransientEnd(object state) =>

@@ -50,7 +50,7 @@ internal static class PhasedEndings<TState>
     private static double Solve(LongRunParts<TState> parts, int end, int[] phases, int[] transient, double[] values)
     {
         var period = parts.Classes[end].Period;
-        var matrix = parts.Chain.Derive(static chain => new StepMatrix(chain.Matrix));
+        var matrix = StepMatrix.Of(parts.Chain);
         var members = transient.Length * period;
         parts.Options.RequireMemory(members, sizeof(double) * (long)members * (members + period + 1L));
         var phased = Phased(parts, end, phases, transient, matrix);

@@ -52,7 +52,8 @@ internal static class AbsorptionSolve<TState>
     private static void Fill(
         ExitSystem<TState> system, Chain<TState> chain, int[] transient, int ends, double[] probabilities, double[] meanSteps, SolveEvidence evidence)
     {
-        var means = system.MeanTimes();
+        var together = system.TrySolveTogether();
+        var means = together?[0] ?? system.MeanTimes();
         for (var k = 0; k < transient.Length; k++)
         {
             meanSteps[transient[k]] = means.Values[k];
@@ -61,14 +62,14 @@ internal static class AbsorptionSolve<TState>
         evidence.Add(means, () => system.Residual(1 / (chain.UniformizationRate ?? 1), meanSteps));
         for (var end = 0; end < ends; end++)
         {
-            var column = system.ExitProbabilities(end);
+            var column = together?[end + 1] ?? system.ExitProbabilities(end);
+            var position = end;
             for (var k = 0; k < transient.Length; k++)
             {
                 probabilities[(transient[k] * ends) + end] = column.Values[k];
             }
 
-            var values = Enumerable.Range(0, chain.StateCount).Select(state => probabilities[(state * ends) + end]).ToArray();
-            evidence.Add(column, () => system.Residual(0, values));
+            evidence.Add(column, () => system.Residual(0, [.. Enumerable.Range(0, chain.StateCount).Select(state => probabilities[(state * ends) + position])]));
         }
     }
 }

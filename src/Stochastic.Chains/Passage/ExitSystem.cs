@@ -10,6 +10,8 @@ namespace Stochastic.Chains.Passage;
 internal sealed class ExitSystem<TState> : IDisposable
     where TState : notnull
 {
+    private const long MostTogether = 1 << 24;
+
     private readonly Chain<TState> _chain;
     private readonly int[] _members;
     private readonly int[] _exitOf;
@@ -20,6 +22,7 @@ internal sealed class ExitSystem<TState> : IDisposable
     private readonly bool _staysInRange;
     private readonly int _merges;
     private GeneralReduction<ScaledDoubleDouble>? _doubled;
+    private ScaledDoubleDouble[][]? _exitRates;
 
     /// <summary>Reduces the system over the members; a move to another state counts as exit number exitOf, or not at all when that is −1.</summary>
     internal ExitSystem(Chain<TState> chain, int[] members, int exits, int[] exitOf, SolveOptions options)
@@ -40,6 +43,8 @@ internal sealed class ExitSystem<TState> : IDisposable
 
     /// <summary>The factors in twice the working precision, made when they are first needed.</summary>
     private GeneralReduction<ScaledDoubleDouble> Doubled => _doubled ??= _rates.ReduceDoubled(_rates.Rows, _options);
+
+    private ScaledDoubleDouble[][] RatesIntoExits => _exitRates ??= ExitRates.Of(_chain.Matrix, _members, _exitOf, _rates.Columns - _members.Length, IsExit);
 
     /// <summary>Gives the working memory back.</summary>
     public void Dispose() => _table.Dispose();
@@ -70,9 +75,42 @@ internal sealed class ExitSystem<TState> : IDisposable
             atExits[state] = IsExit(state) && _exitOf[state] == exit ? 1 : 0;
         }
 
-        var given = Array.ConvertAll(_members, member => ExitRate(member, exit));
-        var solution = Solve(given, atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
+        var solution = Solve(RatesIntoExits[exit], atExits).ToDoubles(_chain.States, _members, Messages.ProbabilityOutOfRange);
         return solution with { Values = Array.ConvertAll(solution.Values, value => Math.Min(1, value)) };
+    }
+
+    /// <summary>
+    /// Mean times, then the probabilities of all exits, solved together, for when no proof of each is asked for; null when a number left the range of
+    /// doubles, or a proof is asked for.
+    /// </summary>
+    internal ExitSolution[]? TrySolveTogether()
+    {
+        var exits = _rates.Columns - _members.Length;
+        if (_options.CertificateLevel == CertificateLevel.Proof || !_staysInRange || (long)_members.Length * (exits + 1) > MostTogether)
+        {
+            return null;
+        }
+
+        using var columns = WorkTable.Rent(_members.Length, exits + 1);
+        var unit = 1 / (_chain.UniformizationRate ?? 1);
+        for (var k = 0; k < _members.Length; k++)
+        {
+            columns.View[k, 0] = unit;
+            for (var exit = 0; exit < exits; exit++)
+            {
+                columns.View[k, exit + 1] = RatesIntoExits[exit][k].ToDouble();
+            }
+        }
+
+        var sharing = new WorkSharing(_options.Parallelism, _options.CancellationToken);
+        if (!ReductionSolve.SolveRight(_table.View, _sums, _members.Length, columns.View, exits + 1, InstructionSet.Widest, sharing))
+        {
+            return null;
+        }
+
+        var view = columns.View;
+        return [.. Enumerable.Range(0, exits + 1).Select(column => new ExitSolution(
+            [.. Enumerable.Range(0, _members.Length).Select(k => column == 0 ? view[k, 0] : Math.Min(1, view[k, column]))], ErrorBasis.SubtractionFree, SolveError))];
     }
 
     /// <summary>Solves y · A = given, both over the members: mean numbers of visits from a start.</summary>
@@ -209,17 +247,6 @@ internal sealed class ExitSystem<TState> : IDisposable
     }
 
     private bool IsExit(int state) => _rates.ColumnOf(state) >= _members.Length;
-
-    private ScaledDoubleDouble ExitRate(int member, int exit)
-    {
-        var rate = default(ScaledDoubleDouble);
-        foreach (var (to, probability) in _chain.Matrix.Row(member))
-        {
-            rate += IsExit(to) && _exitOf[to] == exit ? probability : 0;
-        }
-
-        return rate;
-    }
 
     private static bool TryConvert(ScaledDoubleDouble[] given, out double[] doubles)
     {

@@ -111,8 +111,28 @@ public sealed class FirstPassageTable<TState> : ICertified
     /// <param name="to">The state to reach.</param>
     /// <returns>What <c>TimeTo</c> gives with the options of this table, at <see cref="CertificateLevel.Proof"/>; 0 at the state itself. O(states³).</returns>
     /// <exception cref="UnknownStateException">The label is none of the chain's states.</exception>
+    /// <exception cref="MemoryLimitException">There are too many states for a direct solve.</exception>
+    public HittingTimes<TState> Refine(TState to) => _chain.TimeTo(
+        to, _options with { CertificateLevel = CertificateLevel.Proof, CancellationToken = CancellationToken.None, Progress = null });
+
+    /// <summary>Finds how much the times between all pairs vary, the times of coming back included.</summary>
+    /// <exception cref="MemoryLimitException">There are too many states for a direct solve.</exception>
+    /// <remarks>One solve for each state to reach: O(states⁴) in all. For few states to reach ask <see cref="Refine"/> for each of them.</remarks>
+    /// <example><code>double give = pump.MeanFirstPassage().Variances().StandardDeviation("new", "failed");</code></example>
+    public FirstPassageVariances<TState> Variances() => Variances(_options with { CancellationToken = CancellationToken.None, Progress = null });
+
+    /// <summary>Finds how much the times between all pairs vary, with options.</summary>
+    /// <param name="options">Evidence, cancellation, progress, threads and memory.</param>
+    /// <exception cref="MemoryLimitException">There are too many states for a direct solve.</exception>
     /// <exception cref="OperationCanceledException">The token of the options was cancelled.</exception>
-    public HittingTimes<TState> Refine(TState to) => _chain.TimeTo(to, _options with { CertificateLevel = CertificateLevel.Proof });
+    /// <remarks>
+    /// One solve for each state to reach: O(states⁴) in all, and at <see cref="CertificateLevel.Proof"/> in twice the precision up to 500 states.
+    /// </remarks>
+    public FirstPassageVariances<TState> Variances(SolveOptions options)
+    {
+        ArgumentNullException.ThrowIfNull(options);
+        return new FirstPassageVariance<TState>(_chain, _values, Certificate, options).Solve();
+    }
 
     /// <summary>Copies the times into a new array: row = from, column = to, in state order.</summary>
     public double[,] ToArray()

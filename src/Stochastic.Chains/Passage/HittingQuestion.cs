@@ -95,7 +95,7 @@ internal sealed class HittingQuestion<TState>
     private SurvivorSteps Survivors(TState from)
     {
         int[] lost = [.. Enumerable.Range(0, _chain.StateCount).Where(state => !_split.IsTarget[state] && !_split.IsCertain[state] && !_split.IsPossible[state])];
-        return new SurvivorSteps(_chain.Derive(static chain => new StepMatrix(chain.Matrix)), _targets, lost, _chain.States.Require(from));
+        return new SurvivorSteps(StepMatrix.Of(_chain), _targets, lost, _chain.States.Require(from));
     }
 
     private StoppedPowers Powers(int[] members, SolveOptions options)
@@ -103,7 +103,7 @@ internal sealed class HittingQuestion<TState>
         var bytes = sizeof(double) * (long)members.Length * WorkTable.PreferredStride(StoppedPowers.Columns(members.Length));
         options.RequireMemory(members.Length, bytes);
         var rates = RateTable.WithExits(_chain.Matrix, members, 2, state => _split.IsTarget[state] ? 0 : 1);
-        var steps = _chain.Derive(static chain => new StepMatrix(chain.Matrix));
+        var steps = StepMatrix.Of(_chain);
         var table = WorkTable.Rent(members.Length, StoppedPowers.Columns(members.Length));
         rates.CopyTo(table.View);
         for (var k = 0; k < members.Length; k++)

@@ -84,6 +84,12 @@ public sealed class PassageMoments<TState> : ICertified
         return rest > 0 ? $"{table}{Environment.NewLine}… and {Text.Count(rest)} more states" : table.ToString();
     }
 
+    /// <summary>The variance by position, of any magnitude; nothing where the mean is infinite.</summary>
+    internal ScaledDoubleDouble WideVariance(int state) => _variances[state];
+
+    /// <summary>The mean by position.</summary>
+    internal double MeanAt(int state) => _means[state];
+
     private double InRange(ScaledDoubleDouble[] values, TState from)
     {
         var state = States.Require(from);

@@ -19,7 +19,7 @@ internal sealed class SquaredDeviations<TState>(Chain<TState> chain, double[] me
     private const double UnitRoundoff = 1.1102230246251565e-16;
     private const double Inflation = 1.01;
 
-    private readonly StepMatrix _steps = chain.Derive(static chain => new StepMatrix(chain.Matrix));
+    private readonly StepMatrix _steps = StepMatrix.Of(chain);
     private readonly double _step = chain.UniformizationRate is null ? 1 : 0;
 
     /// <summary>s_i, and a bound on how far it is from the exact mean of squares.</summary>

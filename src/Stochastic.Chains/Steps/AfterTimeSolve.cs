@@ -17,7 +17,7 @@ internal static class AfterTimeSolve<TState>
         var chain = start.Chain;
         var rate = chain.UniformizationRate ?? throw new InvalidOperationException(Messages.NoRates);
         var sums = times.Select(time => new AfterTimeSum(time, Jumps(time, rate, parameter), chain.StateCount)).ToArray();
-        var matrix = StepPath<TState>.MatrixOf(chain);
+        var matrix = StepMatrix.Of(chain);
         var path = new StepPath<TState>(start.Distribution);
         var reachable = CountReachable(chain, start.Distribution);
         Propagate(path, matrix, sums, reachable, options);

@@ -23,7 +23,7 @@ internal static class PopulationSolve<TState>
         for (var step = 1; step <= chains.Length; step++)
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            var matrix = StepPath<TState>.MatrixOf(chains[step - 1]);
+            var matrix = StepMatrix.Of(chains[step - 1]);
             var source = expected.AsSpan((step - 1) * states.Count, states.Count).ToArray();
             var target = expected.AsSpan(step * states.Count, states.Count);
             losses[step] = losses[step - 1] + Leave(source, population.Losses);
@@ -58,7 +58,7 @@ internal static class PopulationSolve<TState>
                 return groups;
             }
 
-            var matrix = StepPath<TState>.MatrixOf(chains[entry - 1]);
+            var matrix = StepMatrix.Of(chains[entry - 1]);
             matrix.MultiplyColumn(ahead, behind);
             VectorLoops.Multiply(keeps, behind);
             (ahead, behind) = (behind, ahead);

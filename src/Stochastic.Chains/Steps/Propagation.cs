@@ -11,7 +11,7 @@ internal static class Propagation<TState>
     /// <summary>Where things stand after a number of steps of one chain.</summary>
     internal static StepDistribution<TState> Run(ChainStart<TState> start, long steps, SolveOptions options)
     {
-        var matrix = StepPath<TState>.MatrixOf(start.Chain);
+        var matrix = StepMatrix.Of(start.Chain);
         var report = options.Report("steps");
         var path = new StepPath<TState>(start.Distribution);
         while (path.Steps < steps)
@@ -35,7 +35,7 @@ internal static class Propagation<TState>
         foreach (var chain in Checked(start.States, chains))
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+            path.Advance(StepMatrix.Of(chain), 1);
             yield return path.ToDistribution(options);
         }
     }
@@ -47,7 +47,7 @@ internal static class Propagation<TState>
         foreach (var chain in Checked(start.States, chains))
         {
             options.CancellationToken.ThrowIfCancellationRequested();
-            path.Advance(StepPath<TState>.MatrixOf(chain), 1);
+            path.Advance(StepMatrix.Of(chain), 1);
         }
 
         return path.ToDistribution(options);

@@ -42,8 +42,8 @@ public sealed class SpectralDecomposition<TState> : ICertified
         _step = step;
         _factors = factors;
         _bound = bound;
-        _options = options;
-        _sharing = new WorkSharing(options.Parallelism, options.CancellationToken);
+        _options = options with { CancellationToken = CancellationToken.None, Progress = null }; // what is asked later is not cancelled with what was asked first
+        _sharing = new WorkSharing(options.Parallelism, CancellationToken.None);
         Certificate = certificate;
         HasOrthogonalVectors = isSymmetric;
         Eigenvalues = Array.AsReadOnly(factors.Eigenvalues);

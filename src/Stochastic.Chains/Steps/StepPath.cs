@@ -35,9 +35,6 @@ internal sealed class StepPath<TState>
     /// <summary>Whether no product has left the range in which it rounds once.</summary>
     internal bool StaysInRange { get; private set; } = true;
 
-    /// <summary>The matrix of a step of a chain, made once and kept with it.</summary>
-    internal static StepMatrix MatrixOf(Chain<TState> chain) => chain.Derive(static chain => new StepMatrix(chain.Matrix));
-
     /// <summary>The roundings of one step, in units of 2⁻⁵³.</summary>
     internal static double RoundingsOf(StepMatrix matrix) => matrix.LargestIndegree + matrix.StayRoundings + RoundingsPerStep;
 

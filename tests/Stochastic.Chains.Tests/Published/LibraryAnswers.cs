@@ -27,6 +27,9 @@ internal static class LibraryAnswers
             ["absorption_probability_top"] = query => query.Vector().Zip(Transient(query, Reaching(query, query.Chain().StateCount - 1))),
             ["first_probability"] = query => [(query.Scalar(), Reaching(query, query.Chain().StateCount - 2)[0])],
             ["ruin"] = Ruin,
+            ["variance_first_passage"] = VarianceFirstPassage,
+            ["lump"] = Lump,
+            ["censored_chain"] = query => Entries(query, query.Chain().ToChain().Censor(query.States("states"))),
             ["substochastic_radius"] = query => [(query.Scalar(), 1 - query.Chain().ToChain().QuasiStationary().DecayRate)],
             ["absorption_variance"] = query => query.Vector().Zip(Transient(query, Variances(query.Chain().ToChain().Absorption().Steps))),
             ["nstep_row"] = query => query.Vector().Zip(After(query, query.IntegerArgument("start"), Steps(query))),
@@ -92,6 +95,25 @@ internal static class LibraryAnswers
     private static double CommuteTime(FirstPassageTable<int> table, int[] pair) => table[pair[0], pair[1]] + table[pair[1], pair[0]];
 
     private static double[] Means(PublishedQuery query, int[] targets) => query.Chain().ToChain().TimeToAny(targets).Values.ToArray();
+
+    private static IEnumerable<Pair> VarianceFirstPassage(PublishedQuery query)
+    {
+        var variances = query.Chain().ToChain().MeanFirstPassage().Variances();
+        return query.Matrix().SelectMany((row, from) => row.Select((published, to) => (published, variances.Variance(from, to))));
+    }
+
+    private static IEnumerable<Pair> Lump(PublishedQuery query)
+    {
+        var groups = query.StateLists("partition");
+        return Entries(query, query.Chain().ToChain().Lump(state => groups.First(group => group.Contains(state))[0]));
+    }
+
+    /// <summary>The states in the order of the published table, which need not be that of the chain.</summary>
+    private static IEnumerable<Pair> Entries(PublishedQuery query, Chain<int> chain)
+    {
+        var order = query.HasArgument("states") ? query.States("states") : [.. query.StateLists("partition").Select(group => group[0])];
+        return query.Matrix().SelectMany((row, from) => row.Select((published, to) => (published, chain[order[from], order[to]])));
+    }
 
     private static double[] Variances(HittingTimes<int> times) => [.. times.States.Select(times.Variance)];
 
