@@ -1,3 +1,5 @@
-using BenchmarkDotNet.Running;
+using Stochastic.Chains.Benchmarks;
 
-BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+return args is [var name, .. var rest] && Commands.All.FirstOrDefault(command => command.Name == name) is { } command
+    ? command.Run(rest)
+    : Commands.Unknown(args);

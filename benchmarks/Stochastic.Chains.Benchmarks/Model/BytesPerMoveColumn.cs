@@ -30,11 +30,9 @@ internal sealed class BytesPerMoveColumn : IColumn
 
     public string GetValue(Summary summary, BenchmarkCase benchmarkCase, SummaryStyle style) => GetValue(summary, benchmarkCase);
 
-    public string GetValue(Summary summary, BenchmarkCase benchmarkCase)
-    {
-        var moves = (int)benchmarkCase.Parameters[nameof(FromTransitionsBenchmarks.Transitions)];
-        return summary[benchmarkCase]?.GcStats.GetBytesAllocatedPerOperation(benchmarkCase) is { } bytes
+    public string GetValue(Summary summary, BenchmarkCase benchmarkCase) =>
+        benchmarkCase.Parameters[nameof(FromTransitionsBenchmarks.Transitions)] is int moves
+        && summary[benchmarkCase]?.GcStats.GetBytesAllocatedPerOperation(benchmarkCase) is { } bytes
             ? ((double)bytes / moves).ToString("F1", CultureInfo.InvariantCulture)
             : "?";
-    }
 }
