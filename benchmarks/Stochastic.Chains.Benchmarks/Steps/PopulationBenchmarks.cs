@@ -34,5 +34,5 @@ public class PopulationBenchmarks
 
     /// <summary>The law of the number in one state at the last step.</summary>
     [Benchmark]
-    public CountDistribution Count() => _forecast.Count(Weeks, "clean");
+    public CountDistribution Count() => _forecast.Count("clean", Weeks);
 }
