@@ -1,4 +1,5 @@
 using System.Globalization;
+using MathNet.Numerics;
 using Stochastic.Chains.Benchmarks.Measuring;
 
 namespace Stochastic.Chains.Benchmarks.Ratios;
@@ -29,6 +30,7 @@ internal static class RatioRun
     /// <exception cref="InvalidOperationException">Two answers differ.</exception>
     internal static List<Ratio> Measure(Comparison comparison, PythonProcess? python, double secondsEach)
     {
+        Control.UseSingleThread();
         GC.Collect();
         var (ours, proved, all) = comparison.Prepare();
         List<Rival> rivals = [.. all.Where(rival => rival.Run is not null || python is not null)];
