@@ -8,7 +8,7 @@ internal sealed class MoveCounter(PathRecorder? recorder)
     private const int TableSize = 64;
 
     private readonly long[] _table = new long[TableSize * TableSize];
-    private readonly Dictionary<long, long> _others = [];
+    private readonly Dictionary<long, long> _others = new(PairComparer.Instance);
 
     internal MoveCounter()
         : this(null)
