@@ -104,7 +104,7 @@ public class DistributionTests
         var fewer = Distribution.Uniform(StateSpace.Of(Crates.Take(3)));
 
         FluentActions.Invoking(() => Pool.TotalVariation(reordered)).Should().Throw<ArgumentException>().WithParameterName("other");
-        FluentActions.Invoking(() => Pool.TotalVariation(fewer)).Should().Throw<ArgumentException>().WithMessage("*(4 states and 3)*Compare distributions of one chain.*");
+        FluentActions.Invoking(() => Pool.TotalVariation(fewer)).Should().Throw<ArgumentException>().WithMessage("*(4 states and 3)*Use distributions over the states of one chain.*");
         FluentActions.Invoking(() => Pool.TotalVariation(null!)).Should().Throw<ArgumentNullException>();
     }
 
