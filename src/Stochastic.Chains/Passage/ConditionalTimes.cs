@@ -1,7 +1,6 @@
 using System.Collections;
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
-using System.Globalization;
 using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains;
@@ -22,8 +21,6 @@ namespace Stochastic.Chains;
 public sealed class ConditionalTimes<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
-    private const int LargestTable = 24;
-
     private readonly double[] _means;
 
     internal ConditionalTimes(StateSpace<TState> states, double[] means, Certificate certificate)
@@ -54,15 +51,5 @@ public sealed class ConditionalTimes<TState> : ICertified, IEnumerable<KeyValueP
     IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the means, the same in every culture.</summary>
-    public override string ToString()
-    {
-        var table = new TextTable(["from", "mean time if reached"]);
-        foreach (var state in States.Take(LargestTable))
-        {
-            table.AddRow([Text.Label(state), Mean(state).ToString("G6", CultureInfo.InvariantCulture)]);
-        }
-
-        var rest = States.Count - LargestTable;
-        return rest > 0 ? $"{table}{Environment.NewLine}… and {Text.Count(rest)} more states" : table.ToString();
-    }
+    public override string ToString() => StateTable.Write(States, ["from", "mean time if reached"], position => [_means[position]]);
 }

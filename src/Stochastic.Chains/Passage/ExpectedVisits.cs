@@ -1,7 +1,6 @@
 using System.Collections;
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
-using System.Globalization;
 using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains;
@@ -25,8 +24,6 @@ namespace Stochastic.Chains;
 public sealed class ExpectedVisits<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
-    private const int LargestTable = 24;
-
     private readonly double[] _visits;
 
     internal ExpectedVisits(TState from, StateSpace<TState> states, double[] visits, Certificate certificate)
@@ -60,16 +57,6 @@ public sealed class ExpectedVisits<TState> : ICertified, IEnumerable<KeyValuePai
     IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of the visits, the same in every culture.</summary>
-    public override string ToString()
-    {
-        var table = new TextTable(["state", "visits"]);
-        foreach (var state in States.Take(LargestTable))
-        {
-            table.AddRow([Text.Label(state), this[state].ToString("G6", CultureInfo.InvariantCulture)]);
-        }
-
-        var rest = States.Count - LargestTable;
-        var end = rest > 0 ? $"{Environment.NewLine}… and {Text.Count(rest)} more states" : string.Empty;
-        return $"From {Text.Quoted(From)}{Environment.NewLine}{table}{end}";
-    }
+    public override string ToString() =>
+        $"From {Text.Quoted(From)}{Environment.NewLine}{StateTable.Write(States, ["state", "visits"], position => [_visits[position]])}";
 }

@@ -1,7 +1,6 @@
 using System.Collections;
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
-using System.Globalization;
 using Stochastic.Chains.Internal;
 
 namespace Stochastic.Chains;
@@ -20,8 +19,6 @@ namespace Stochastic.Chains;
 public sealed class FirstOfTwo<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
-    private const int LargestTable = 24;
-
     private readonly double[] _first;
     private readonly double[] _second;
     private readonly double[] _neither;
@@ -76,15 +73,7 @@ public sealed class FirstOfTwo<TState> : ICertified, IEnumerable<KeyValuePair<TS
     /// <summary>A small table of the probabilities, the same in every culture.</summary>
     public override string ToString()
     {
-        var table = new TextTable(["from", "first", "second", "neither"]);
-        for (var state = 0; state < Math.Min(States.Count, LargestTable); state++)
-        {
-            string[] figures = [.. new[] { _first[state], _second[state], _neither[state] }.Select(value => value.ToString("G6", CultureInfo.InvariantCulture))];
-            table.AddRow([Text.Label(States[state]), .. figures]);
-        }
-
-        var rest = States.Count - LargestTable;
-        var end = rest > 0 ? $"{Environment.NewLine}… and {Text.Count(rest)} more states" : string.Empty;
-        return $"First {Text.List(Firsts)} or second {Text.List(Seconds)}{Environment.NewLine}{table}{end}";
+        var table = StateTable.Write(States, ["from", "first", "second", "neither"], position => [_first[position], _second[position], _neither[position]]);
+        return $"First {Text.List(Firsts)} or second {Text.List(Seconds)}{Environment.NewLine}{table}";
     }
 }

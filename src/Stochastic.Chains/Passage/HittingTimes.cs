@@ -1,7 +1,6 @@
 using System.Collections;
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
-using System.Globalization;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Passage;
 
@@ -27,8 +26,6 @@ namespace Stochastic.Chains;
 public sealed class HittingTimes<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
-    private const int LargestTable = 24;
-
     private readonly HittingQuestion<TState> _question;
     private readonly double[] _means;
     private readonly double[] _reaching;
@@ -228,14 +225,7 @@ public sealed class HittingTimes<TState> : ICertified, IEnumerable<KeyValuePair<
     /// <summary>A small table of the means and probabilities, the same in every culture.</summary>
     public override string ToString()
     {
-        var table = new TextTable(["from", "mean time", "ever reached"]);
-        foreach (var state in States.Take(LargestTable))
-        {
-            table.AddRow([Text.Label(state), Mean(state).ToString("G6", CultureInfo.InvariantCulture), ReachingProbability(state).ToString("G6", CultureInfo.InvariantCulture)]);
-        }
-
-        var rest = States.Count - LargestTable;
-        var end = rest > 0 ? $"{Environment.NewLine}… and {Text.Count(rest)} more states" : string.Empty;
-        return $"Time to {Text.List(Targets)}{Environment.NewLine}{table}{end}";
+        var table = StateTable.Write(States, ["from", "mean time", "ever reached"], position => [_means[position], _reaching[position]]);
+        return $"Time to {Text.List(Targets)}{Environment.NewLine}{table}";
     }
 }

@@ -1,7 +1,6 @@
 using System.Collections;
 using System.Diagnostics;
 using System.Diagnostics.CodeAnalysis;
-using System.Globalization;
 using Stochastic.Chains.Internal;
 using Stochastic.Chains.Kernels;
 
@@ -25,8 +24,6 @@ namespace Stochastic.Chains;
 public sealed class PassageMoments<TState> : ICertified, IEnumerable<KeyValuePair<TState, double>>
     where TState : notnull
 {
-    private const int LargestTable = 24;
-
     private readonly double[] _means;
     private readonly ScaledDoubleDouble[] _variances;
     private readonly ScaledDoubleDouble[] _thirdMoments;
@@ -80,17 +77,8 @@ public sealed class PassageMoments<TState> : ICertified, IEnumerable<KeyValuePai
     IEnumerator IEnumerable.GetEnumerator() => GetEnumerator();
 
     /// <summary>A small table of means and standard deviations, the same in every culture.</summary>
-    public override string ToString()
-    {
-        var table = new TextTable(["from", "mean", "standard deviation"]);
-        foreach (var state in States.Take(LargestTable))
-        {
-            table.AddRow([Text.Label(state), Mean(state).ToString("G6", CultureInfo.InvariantCulture), StandardDeviation(state).ToString("G6", CultureInfo.InvariantCulture)]);
-        }
-
-        var rest = States.Count - LargestTable;
-        return rest > 0 ? $"{table}{Environment.NewLine}… and {Text.Count(rest)} more states" : table.ToString();
-    }
+    public override string ToString() =>
+        StateTable.Write(States, ["from", "mean", "standard deviation"], position => [_means[position], _deviations[position]]);
 
     /// <summary>The variance by position, of any magnitude; nothing where the mean is infinite.</summary>
     internal ScaledDoubleDouble WideVariance(int state) => _variances[state];
